@@ -16,8 +16,31 @@ const pure = {
   'lib/snapshot': ['lib/numerics', 'lib/units', 'lib/fluids', 'lib/vessel', 'lib/formula', 'lib/sheet'],
   'lib/auth/policies': [],
 }
-const own = ['app', 'components', 'db', 'realtime', 'tests', 'lib/cli', 'lib/auth', 'lib/mail', 'lib/storage', 'lib/report']
-const outside = ['react', 'react-dom', 'next', 'next-auth', 'drizzle-orm', '@electric-sql/pglite', 'ws', 'pino', 'fs', 'path', 'process']
+const own = [
+  'app',
+  'components',
+  'db',
+  'realtime',
+  'tests',
+  'lib/cli',
+  'lib/auth',
+  'lib/mail',
+  'lib/storage',
+  'lib/report',
+]
+const outside = [
+  'react',
+  'react-dom',
+  'next',
+  'next-auth',
+  'drizzle-orm',
+  '@electric-sql/pglite',
+  'ws',
+  'pino',
+  'fs',
+  'path',
+  'process',
+]
 
 const layer = (files, forbidden, message, packages = []) => ({
   files,
@@ -29,7 +52,12 @@ const layer = (files, forbidden, message, packages = []) => ({
           { group: forbidden.flatMap((part) => [`@/${part}`, `@/${part}/**`]), message },
           { group: ['../../../*'], message: 'Write a path that climbs this far from the root: @/…' },
           ...(packages.length
-            ? [{ group: packages.flatMap((name) => [name, `${name}/*`, `node:${name}`]), message: 'This folder is pure: it runs in the browser, its worker, the server and the tests alike.' }]
+            ? [
+                {
+                  group: packages.flatMap((name) => [name, `${name}/*`, `node:${name}`]),
+                  message: 'This folder is pure: it runs in the browser, its worker, the server and the tests alike.',
+                },
+              ]
             : []),
         ],
       },
@@ -38,7 +66,9 @@ const layer = (files, forbidden, message, packages = []) => ({
 })
 
 const pureLayers = Object.entries(pure).map(([part, allowed]) => {
-  const others = Object.keys(pure).filter((name) => name !== part && !allowed.includes(name) && !name.startsWith(`${part}/`))
+  const others = Object.keys(pure).filter(
+    (name) => name !== part && !allowed.includes(name) && !name.startsWith(`${part}/`),
+  )
   return layer(
     [`${part}/**/*.{ts,tsx}`],
     [...others, ...own.filter((name) => !part.startsWith(name))],
@@ -48,7 +78,17 @@ const pureLayers = Object.entries(pure).map(([part, allowed]) => {
 })
 
 export default tseslint.config(
-  { ignores: ['node_modules/**', '.next/**', 'data/**', 'lib/formula/parser*.js', 'next-env.d.ts', 'db/migrations/**', 'pictures/**'] },
+  {
+    ignores: [
+      'node_modules/**',
+      '.next/**',
+      'data/**',
+      'lib/formula/parser*.js',
+      'next-env.d.ts',
+      'db/migrations/**',
+      'pictures/**',
+    ],
+  },
   ...tseslint.configs.recommended,
   hooks.configs.flat['recommended-latest'] ?? hooks.configs['recommended-latest'],
   {
@@ -62,7 +102,15 @@ export default tseslint.config(
   { files: ['lib/cli/**', 'tests/**'], rules: { 'no-console': 'off' } },
   ...pureLayers,
   layer(['db/**/*.ts'], ['app', 'components', 'realtime', 'tests'], 'db speaks SQL and knows nobody above it.'),
-  layer(['components/**/*.{ts,tsx}'], ['app', 'db', 'tests', 'lib/cli', 'lib/mail', 'lib/storage'], 'Components get data and actions as props.', ['drizzle-orm', '@electric-sql/pglite', 'ws', 'pino', 'fs', 'path']),
+  layer(
+    ['components/**/*.{ts,tsx}'],
+    ['app', 'db', 'tests', 'lib/cli', 'lib/mail', 'lib/storage'],
+    'Components get data and actions as props.',
+    ['drizzle-orm', '@electric-sql/pglite', 'ws', 'pino', 'fs', 'path'],
+  ),
   layer(['realtime/**/*.ts'], ['app', 'components', 'tests'], 'realtime uses sheet/doc, auth and db.'),
-  layer(['app/**/*.{ts,tsx}'], ['db/schema', 'tests', 'lib/cli'], 'app reads the database through use-cases.', ['drizzle-orm', '@electric-sql/pglite']),
+  layer(['app/**/*.{ts,tsx}'], ['db/schema', 'tests', 'lib/cli'], 'app reads the database through use-cases.', [
+    'drizzle-orm',
+    '@electric-sql/pglite',
+  ]),
 )

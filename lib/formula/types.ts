@@ -48,7 +48,11 @@ export type Read =
   | { readonly kind: 'cell'; readonly column: string; readonly row: RowRef }
   | { readonly kind: 'thing'; readonly thing: string }
 
-export type RowRef = { readonly at: 'self' } | { readonly at: 'from' } | { readonly at: 'all' } | { readonly at: 'row'; readonly row: string }
+export type RowRef =
+  | { readonly at: 'self' }
+  | { readonly at: 'from' }
+  | { readonly at: 'all' }
+  | { readonly at: 'row'; readonly row: string }
 
 export interface Parameter {
   readonly name: string

@@ -12,10 +12,18 @@ export type CellValue =
 /** Beyond which limit of its column a value lies. */
 export type LimitMark = 'over' | 'under'
 
-export interface SheetValues {
+/** The limits of a cell's column, worked out for its row, in SI. */
+export interface Limits {
+  readonly high?: number
+  readonly low?: number
+}
+
+/** What changed since the engine last spoke; an empty value or empty limits are a change too. */
+export interface ValueChanges {
   /** By cellKey. */
   readonly cells: ReadonlyMap<string, CellValue>
-  readonly marks: ReadonlyMap<string, LimitMark>
+  readonly limits: ReadonlyMap<string, Limits>
   /** By thing id. */
   readonly things: ReadonlyMap<string, CellValue>
+  readonly ambient_Pa: number
 }
