@@ -1,0 +1,10 @@
+/**
+ * Filling, venting and holding gas in rigid vessels. Everything is plain data in SI; an operation takes a run and gives a
+ * run. A wish that cannot be met throws a Problem with the reason.
+ */
+export { together, type Inside, type Layer, type Limits, type Outside, type Shell, type Vessel } from './vessel'
+export type { HeatCapacity, HeatCapacityTable } from './shell/heatCapacity'
+export { KV_PER_CV, type Path } from './path'
+export type { Supply } from './supply'
+export type { Draw, Heat, Operation, Run, ShellState, StoppedBy, Stops, Trace } from './run'
+export type { ChargeRequest, EqualiseRequest, EvacuateRequest, HoldRequest, VentRequest } from './operations/requests'
