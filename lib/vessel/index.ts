@@ -4,7 +4,13 @@
  */
 export { together, type Inside, type Layer, type Limits, type Outside, type Shell, type Vessel } from './vessel'
 export type { HeatCapacity, HeatCapacityTable } from './shell/heatCapacity'
+export { ALUMINIUM, POLYMER, STEEL } from './shell/materials'
 export { KV_PER_CV, type Path } from './path'
 export type { Supply } from './supply'
 export type { Draw, Heat, Operation, Run, ShellState, StoppedBy, Stops, Trace } from './run'
 export type { ChargeRequest, EqualiseRequest, EvacuateRequest, HoldRequest, VentRequest } from './operations/requests'
+export { charge } from './operations/charge'
+export { equalise } from './operations/equalise'
+export { hold } from './operations/hold'
+export { start, type Given } from './operations/start'
+export { evacuate, vent } from './operations/vent'

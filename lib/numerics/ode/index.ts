@@ -1,2 +1,3 @@
 export { integrate, type IntegrationOptions, type Method, type Outcome, type StepView } from './integrate'
+export { fallToZero } from './root'
 export type { OdeSystem } from './system'

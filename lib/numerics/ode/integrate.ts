@@ -24,7 +24,7 @@ export interface IntegrationOptions {
   readonly maxSteps?: number
   readonly maxStep?: number
   /** Called at the start and at the end of each accepted step, where `rates` has just been called. */
-  readonly onPoint?: (t: number, y: Float64Array, step: StepView | null) => void
+  readonly onPoint?: (t: number, y: Float64Array, f: Float64Array, step: StepView | null) => void
 }
 
 export interface Outcome {
@@ -91,7 +91,7 @@ class Integration {
     const { until, maxSteps = 5000, maxStep = Infinity } = options
     this.point.set(y0)
     this.begin()
-    options.onPoint?.(0, this.stepper.y, null)
+    options.onPoint?.(0, this.stepper.y, this.stepper.f, null)
     const already = values.findIndex((value, i) => system.events[i].terminal && value <= 0)
     if (already >= 0) return this.outcome('event', already)
     let h = Math.min(this.firstStep(), maxStep)
@@ -155,7 +155,7 @@ class Integration {
       this.begin()
     }
     const at = (theta: number, out: Float64Array) => stepper.dense(theta, out)
-    options.onPoint?.(this.t, stepper.y, { t: from, h, end: event.theta, at })
+    options.onPoint?.(this.t, stepper.y, stepper.f, { t: from, h, end: event.theta, at })
     return event.index
   }
 

@@ -1,0 +1,144 @@
+import type { OdeSystem } from '@/lib/numerics/ode'
+import type { Connection, End } from './connection'
+import { differenceJacobian } from './jacobian'
+import type { ControlVolume } from './volume'
+
+/** What ends or interrupts a run, as a function of where it stands that falls to zero. */
+export interface Watch {
+  readonly terminal: boolean
+  value(): number
+}
+
+const RAMP_ROUNDS = 30
+
+/** Heat into the contents and out of the shell, J. */
+const PER_VOLUME = 2
+/** Mass and enthalpy that have passed. */
+const PER_CONNECTION = 2
+
+/**
+ * Volumes and what flows between them and their surroundings, as one system of equations. Behind the volumes' own parts
+ * the solution vector carries what has crossed each border; the balance is struck from those and the states at the ends.
+ */
+export class Network implements OdeSystem {
+  readonly size: number
+  readonly quadratures: number
+  /** Where each volume's part begins. */
+  readonly at: readonly number[]
+  /** Set before the integration begins. */
+  events: readonly Watch[] = []
+  /** Calls of `rates`. */
+  calls = 0
+
+  constructor(
+    readonly volumes: readonly ControlVolume[],
+    readonly connections: readonly Connection[],
+  ) {
+    let size = 0
+    this.at = volumes.map((volume) => (size += volume.size) - volume.size)
+    this.quadratures = PER_VOLUME * volumes.length + PER_CONNECTION * connections.length
+    this.size = size + this.quadratures
+  }
+
+  get evaluations() {
+    const sum = (parts: readonly { readonly evaluations: number }[]) => parts.reduce((n, p) => n + p.evaluations, 0)
+    return sum(this.volumes) + sum(this.connections)
+  }
+
+  /** Places of a volume's ledger: heat into its contents, heat out of its shell. */
+  heatLedger(volume: number): [number, number] {
+    const at = this.size - this.quadratures + PER_VOLUME * volume
+    return [at, at + 1]
+  }
+
+  /** Places of a connection's ledger: mass, enthalpy. */
+  flowLedger(connection: number): [number, number] {
+    const at = this.size - PER_CONNECTION * (this.connections.length - connection)
+    return [at, at + 1]
+  }
+
+  rates(y: Float64Array, out: Float64Array) {
+    this.calls++
+    const { volumes, connections, at } = this
+    for (let i = 0; i < volumes.length; i++) volumes[i].read(y, at[i])
+    for (const connection of connections) connection.evaluate()
+    this.passHeat()
+    out.fill(0)
+    for (let i = 0; i < connections.length; i++) this.addFlow(i, out)
+    for (let i = 0; i < volumes.length; i++) {
+      const [into, lost] = this.heatLedger(i)
+      out[into] = volumes[i].settleRates(out, at[i])
+      out[lost] = volumes[i].outer.heat_W
+    }
+  }
+
+  /** Heat and the flows that depend on it: a ramp's flow follows from the heat, which a jet makes depend on the flow. */
+  private passHeat() {
+    const { volumes, connections } = this
+    for (let round = 0; round < RAMP_ROUNDS; round++) {
+      for (const volume of volumes) volume.passHeat(this.inflow(volume))
+      let change = 0
+      for (const connection of connections) change = Math.max(change, this.follow(connection))
+      if (change <= 1e-13) return
+    }
+  }
+
+  /** Sets the flow of a ramp; returns by how much it changed, relative. */
+  private follow(connection: Connection): number {
+    if (connection.ramp_Pa_s === null || !(connection.drop_Pa > 0)) return 0
+    const served = volumeOf(connection.to) ?? volumeOf(connection.from)
+    if (!served) return 0
+    const sign = volumeOf(connection.to) ? 1 : -1
+    const still = served.pressureRate(0, served.inner.heat_W)
+    const each = served.pressureRate(sign, sign * connection.h_J_kg + served.inner.heat_W) - still
+    const flow = Math.max(0, (sign * connection.ramp_Pa_s - still) / each)
+    const change = flow === connection.flow_kg_s ? 0 : Math.abs(flow / connection.flow_kg_s - 1)
+    connection.flow_kg_s = flow
+    return change
+  }
+
+  /** Net mass flow into a volume at the point last worked out. */
+  inflow(volume: ControlVolume): number {
+    let sum = 0
+    for (const { from, to, flow_kg_s } of this.connections) {
+      if (volumeOf(to) === volume) sum += flow_kg_s
+      if (volumeOf(from) === volume) sum -= flow_kg_s
+    }
+    return sum
+  }
+
+  private addFlow(index: number, out: Float64Array) {
+    const { from, to, flow_kg_s, h_J_kg } = this.connections[index]
+    const energy = flow_kg_s * h_J_kg
+    const source = volumeOf(from)
+    const sink = volumeOf(to)
+    if (source) {
+      const at = this.at[this.volumes.indexOf(source)]
+      out[at] -= flow_kg_s
+      out[at + 1] -= energy
+    }
+    if (sink) {
+      const at = this.at[this.volumes.indexOf(sink)]
+      out[at] += flow_kg_s
+      out[at + 1] += energy
+    }
+    const [mass, enthalpy] = this.flowLedger(index)
+    out[mass] = flow_kg_s
+    out[enthalpy] = energy
+  }
+
+  scales(out: Float64Array) {
+    out.fill(1)
+    this.volumes.forEach((volume, i) => volume.scales(out, this.at[i]))
+  }
+
+  eventValues(out: Float64Array) {
+    for (let i = 0; i < this.events.length; i++) out[i] = this.events[i].value()
+  }
+
+  jacobian(y: Float64Array, f: Float64Array, out: Float64Array) {
+    differenceJacobian(this, y, f, out)
+  }
+}
+
+const volumeOf = (end: End): ControlVolume | null => ('volume' in end ? end.volume : null)

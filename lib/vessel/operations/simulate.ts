@@ -1,0 +1,94 @@
+import { Problem } from '@/lib/errors'
+import { integrate, type Outcome } from '@/lib/numerics/ode'
+import type { Connection } from '../network/connection'
+import { Recorder } from '../network/recorder'
+import { Network } from '../network/system'
+import type { ControlVolume } from '../network/volume'
+import type { Operation, Run, StoppedBy, Stops } from '../run'
+import { bar, celsius, duration } from '../words'
+import { balanceOf } from './balance'
+import { begin } from './begin'
+import { report } from './report'
+import type { Numerics } from './requests'
+import { coldWatch, settledWatch, watchesFor } from './watches'
+
+const DEFAULT_RTOL = 1e-6
+/** A balance has no time to resolve: it is integrated over the mass that passes, nearly exactly. */
+const BALANCE_RTOL = 1e-10
+const DEFAULT_HORIZON_s = 30 * 86_400
+/** In a balance the independent variable is the mass passed over a typical mass; this is more than can pass. */
+const BALANCE_HORIZON = 1e4
+
+export interface Plan extends Numerics {
+  readonly operation: Operation
+  /** The first is the one that the stops refer to. */
+  readonly volumes: readonly ControlVolume[]
+  readonly from: readonly Run[]
+  readonly connections: readonly Connection[]
+  readonly stops: Stops
+  /** A balance alone: no time. */
+  readonly timeless: boolean
+}
+
+/** Carries a plan out: one run for each volume. */
+export function simulate(plan: Plan): Run[] {
+  const { volumes, stops, timeless } = plan
+  const network = new Network(volumes, plan.connections)
+  const y0 = begin(plan, network)
+  const watches = watchesFor(volumes[0], stops)
+  // A run that is to last a given time goes on when nothing changes any more; any other could then never end.
+  if (stops.settled || stops.for_s === undefined) watches.push(settledWatch(network))
+  watches.push(coldWatch(volumes))
+  network.events = watches
+  const recorders = volumes.map((_, i) => new Recorder(network, i, plan.from[i].shell.mean_K))
+  const horizon = timeless ? BALANCE_HORIZON : (plan.horizon_s ?? DEFAULT_HORIZON_s)
+  const outcome = integrate(network, y0, {
+    until: stops.for_s ?? horizon,
+    rtol: timeless ? BALANCE_RTOL : (plan.rtol ?? DEFAULT_RTOL),
+    method: volumes.some((volume) => volume.cells > 1) ? 'stiff' : 'auto',
+    onPoint: (t, _y, f, step) => {
+      for (const recorder of recorders) recorder.at(t)
+      const slopes = recorders.map((recorder) => recorder.slopes(f))
+      recorders.forEach((recorder, i) => recorder.within(step, slopes[i]))
+    },
+  })
+  const stoppedBy = whatStopped(plan, outcome, outcome.event >= 0 ? watches[outcome.event].name : null, recorders[0])
+  network.rates(outcome.y, new Float64Array(network.size))
+  const balance = balanceOf(plan, network, outcome.y)
+  return volumes.map((_, i) =>
+    report({ plan, network, index: i, y: outcome.y, recorder: recorders[i], stoppedBy, outcome, balance }),
+  )
+}
+
+function whatStopped(plan: Plan, outcome: Outcome, event: StoppedBy | null, recorder: Recorder): StoppedBy {
+  const { stops } = plan
+  const at = () => {
+    const { p_Pa, T_K } = recorder.trace
+    return `${bar(p_Pa[p_Pa.length - 1])}, ${celsius(T_K[T_K.length - 1])}`
+  }
+  const after = plan.timeless ? '' : ` after ${duration(outcome.t)}`
+  switch (outcome.status) {
+    case 'event':
+      if (event === 'settled' && !stops.settled && wished(stops)) {
+        throw new Problem('impossible', `it settles at ${at()}${after} without reaching ${wished(stops)}`)
+      }
+      return event ?? 'settled'
+    case 'end':
+      if (stops.for_s !== undefined) return 'for'
+      throw new Problem('unreached', `it has come to ${at()}${after}, and not to ${wished(stops) ?? 'rest'}`)
+    case 'steps':
+    case 'stuck':
+      throw outcome.cause
+        ? new Problem(outcome.cause.code, `at ${at()}${after}: ${outcome.cause.reason}`)
+        : new Problem('unconverged', `the calculation did not get beyond ${at()}${after}`)
+  }
+}
+
+function wished(stops: Stops): string | null {
+  const words: string[] = []
+  if (stops.until_p_Pa !== undefined) words.push(bar(stops.until_p_Pa))
+  if (stops.until_T_K !== undefined) words.push(celsius(stops.until_T_K))
+  if (stops.until_m_kg !== undefined) words.push(`${stops.until_m_kg} kg`)
+  if (stops.until_x !== undefined) words.push(`quality ${stops.until_x}`)
+  return words.length ? words.join(' or ') : null
+}

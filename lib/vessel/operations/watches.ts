@@ -1,0 +1,65 @@
+import type { Network, Watch } from '../network/system'
+import type { Connection } from '../network/connection'
+import { LAMINAR } from '../network/connection'
+import type { ControlVolume } from '../network/volume'
+import type { StoppedBy, Stops } from '../run'
+
+export interface NamedWatch extends Watch {
+  readonly name: StoppedBy
+}
+
+/** At rest within this, K. */
+const RESTING_K = 0.01
+/** The run stops so close above the lowest temperature of the fluid's equation, relative. */
+const COLD_MARGIN = 1e-5
+
+/** The stops of a run as they stand for this volume, which is where it starts. */
+export function watchesFor(volume: ControlVolume, stops: Stops): NamedWatch[] {
+  const watches: NamedWatch[] = []
+  const reach = (name: StoppedBy, target: number | undefined, value: () => number, scale = Math.abs(target ?? 1)) => {
+    if (target === undefined) return
+    const side = value() <= target ? 1 : -1
+    watches.push({ name, terminal: true, value: () => (side * (target - value())) / scale })
+  }
+  reach('until_p', stops.until_p_Pa, () => volume.gas.p_Pa)
+  reach('until_T', stops.until_T_K, () => volume.gas.T_K)
+  reach('until_m', stops.until_m_kg, () => volume.m_kg)
+  reach('until_x', stops.until_x, () => qualityOf(volume.gas.x), 1)
+  return watches
+}
+
+/** Past the triple point of any volume. */
+export function coldWatch(volumes: readonly ControlVolume[]): NamedWatch {
+  return {
+    name: 'triple_point',
+    terminal: true,
+    value: () => Math.min(...volumes.map((v) => v.gas.T_K / (v.fluid.info.T_min_K * (1 + COLD_MARGIN)) - 1)),
+  }
+}
+
+/** Nothing flows any more, and with heat in play every temperature is where it rests. */
+export function settledWatch({ volumes, connections }: Network): NamedWatch {
+  return {
+    name: 'settled',
+    terminal: true,
+    value: () => {
+      const unrest = Math.max(0, ...connections.map(unequal), ...volumes.map(unsettledHeat))
+      return Math.log(Math.max(unrest, 1e-9))
+    },
+  }
+}
+
+const unequal = (connection: Connection) => connection.unequal / LAMINAR
+
+function unsettledHeat(volume: ControlVolume): number {
+  if (volume.cells === 0) return 0
+  const { outside, ambient_T_K } = volume.vessel
+  let distance = Math.abs(volume.gas.T_K - volume.inner.face_K)
+  for (const T of volume.cells_K) distance = Math.max(distance, Math.abs(T - volume.gas.T_K))
+  if (outside?.kind === 'absorbed' && outside.flux_W_m2 !== 0) return Infinity
+  if (outside?.kind === 'fixed') distance = Math.max(distance, Math.abs(volume.outer.face_K - ambient_T_K))
+  return distance / RESTING_K
+}
+
+/** Quality with one phase taken as wholly vapour, so that a stop at quality 1 means: no liquid left. */
+const qualityOf = (x: number) => (x >= 0 && x <= 1 ? x : 1)

@@ -1,0 +1,196 @@
+import { Problem } from '@/lib/errors'
+import type { Fluid, State } from '@/lib/fluids'
+import { soundSpeedSquared } from '../network/derivatives'
+
+const MAX_FAST = 14
+const MAX_BISECTIONS = 60
+/** Nearer to equal pressures than this, differences of enthalpy lose too many digits. */
+const NEARLY_EQUAL = 1e-4
+/** No flux: it would be faster than sound at that pressure. */
+const FASTER = -1
+/** No flux: the fluid's equation does not reach that state. */
+const BEYOND = -2
+
+/**
+ * Mass flux, kg/(m² s), along the isentrope of a fluid that starts from rest: G = ρ √(2 (h0 - h)), in equilibrium
+ * through one and two phases, choked where it is greatest. One instance follows one place: each search starts from the
+ * last answer. Where the throat would be colder than the fluid's equation reaches (below the triple point), the
+ * expansion is taken as that of a perfect gas with the isentropic exponent upstream: nothing condenses.
+ */
+export class IsentropicFlux {
+  /** Evaluations of the equation of state since it was made. */
+  evaluations = 0
+  private throat: State | undefined
+  private trial: State | undefined
+  /** The last choked throat, relative to the state upstream of it. */
+  private logRho = NaN
+  private logT = NaN
+  /** Fundamental derivative of gas dynamics at the last throat: how fast the search closes in. */
+  private gamma = 1.2
+  private wasChoked = true
+  /** The upstream state for which the choked answer below holds. */
+  private upP_Pa = NaN
+  private upH_J_kg = NaN
+  private chokedG = 0
+  private chokedP_Pa = 0
+  private frozen = false
+
+  constructor(private readonly fluid: Fluid) {}
+
+  flux(up: State, p_down_Pa: number): number {
+    const known = up.p_Pa === this.upP_Pa && up.h_J_kg === this.upH_J_kg
+    // A flow that was not choked a moment ago is most likely not now, and that is seen at its end state alone.
+    if (!known && !this.wasChoked) {
+      const G = this.subsonic(up, p_down_Pa)
+      if (G >= 0) return G
+    }
+    if (!known) this.choke(up)
+    this.wasChoked = p_down_Pa <= this.chokedP_Pa
+    if (this.wasChoked) return this.chokedG
+    if (this.frozen) return frozenFlux(up, p_down_Pa)
+    const G = this.subsonic(up, p_down_Pa)
+    return G >= 0 ? G : this.chokedG
+  }
+
+  /** The greatest flux from a state, and the pressure at the throat. */
+  choked(up: State): { G_kg_m2s: number; p_Pa: number } {
+    this.choke(up)
+    return { G_kg_m2s: this.chokedG, p_Pa: this.chokedP_Pa }
+  }
+
+  /** Flux to a pressure that is reached in the throat, or why there is none (FASTER, BEYOND). */
+  private subsonic(up: State, p_down_Pa: number): number {
+    const drop = up.p_Pa - p_down_Pa
+    if (drop <= 0) return 0
+    if (drop < NEARLY_EQUAL * up.p_Pa) {
+      const exponent = isentropicExponent(up)
+      const ratio = p_down_Pa / up.p_Pa
+      const speedSquared = (2 * up.p_Pa * powerRise(ratio, exponent)) / up.rho_kg_m3
+      return up.rho_kg_m3 * ratio ** (1 / exponent) * Math.sqrt(speedSquared)
+    }
+    let end: State
+    try {
+      end = this.trial = this.fluid.state('ps', p_down_Pa, up.s_J_kgK, this.trial, this.trial ?? up)
+    } catch (error) {
+      if (error instanceof Problem) return BEYOND
+      throw error
+    }
+    this.evaluations += end.evaluations
+    const speedSquared = 2 * (up.h_J_kg - end.h_J_kg)
+    if (speedSquared > soundSpeedSquared(end)) return FASTER
+    return end.rho_kg_m3 * Math.sqrt(Math.max(0, speedSquared))
+  }
+
+  private choke(up: State): void {
+    this.upP_Pa = up.p_Pa
+    this.upH_J_kg = up.h_J_kg
+    this.frozen = false
+    if (!this.chokeFast(up) && !this.chokeByPressure(up)) {
+      this.frozen = true
+      const exponent = isentropicExponent(up)
+      this.chokedP_Pa = up.p_Pa * (2 / (exponent + 1)) ** (exponent / (exponent - 1))
+      this.chokedG = frozenFlux(up, this.chokedP_Pa)
+    }
+  }
+
+  /**
+   * Newton's method in density and temperature on s = s0 and w² = 2 (h0 - h), one evaluation a round. Since the flux is at
+   * its greatest there, it is exact to second order in what the density is off. False where it does not settle at once.
+   */
+  private chokeFast(up: State): boolean {
+    if (Number.isNaN(this.logRho)) {
+      const exponent = Math.min(3, Math.max(1.05, isentropicExponent(up)))
+      this.logRho = Math.log(2 / (exponent + 1)) / (exponent - 1)
+      this.logT = (exponent - 1) * this.logRho
+    }
+    let rho = up.rho_kg_m3 * Math.exp(this.logRho)
+    let T = up.T_K * Math.exp(this.logT)
+    let lastStep = 0
+    let lastF = 0
+    for (let count = 0; count < MAX_FAST; count++) {
+      const t = this.stateAt(rho, T)
+      if (!t) break
+      const ds = up.s_J_kgK - t.s_J_kgK
+      const dT = (t.T_K * ds) / t.cv_J_kgK
+      if (Math.abs(dT) > 0.05 * T) {
+        T += Math.sign(dT) * 0.05 * T
+        lastStep = 0
+        continue
+      }
+      const h = t.h_J_kg + (t.cv_J_kgK + t.dpdT / rho) * dT
+      const speedSquared = 2 * (up.h_J_kg - h)
+      const sound2 = soundSpeedSquared(t)
+      const F = sound2 - speedSquared
+      if (lastStep !== 0) {
+        const slope = (F - lastF) / (2 * sound2 * lastStep)
+        if (slope > 0.3 && slope < 6) this.gamma = slope
+      }
+      if (Math.abs(F) < 2e-6 * sound2 && Math.abs(dT) < 1e-6 * T) {
+        this.logRho = Math.log(rho / up.rho_kg_m3)
+        this.logT = Math.log(T / up.T_K)
+        this.chokedG = rho * Math.sqrt(speedSquared)
+        this.chokedP_Pa = t.p_Pa + t.dpdT * dT
+        return true
+      }
+      const step = Math.max(-0.3, Math.min(0.3, -F / (2 * this.gamma * sound2)))
+      lastStep = Math.abs(step) > 1e-7 ? step : 0
+      lastF = F
+      T = (T + dT) * Math.exp((t.dpdT / (rho * t.cv_J_kgK)) * step)
+      rho *= Math.exp(step)
+      if (rho > up.rho_kg_m3) rho = up.rho_kg_m3
+    }
+    this.logRho = NaN
+    return false
+  }
+
+  private stateAt(rho_kg_m3: number, T_K: number): State | null {
+    try {
+      this.throat = this.fluid.state('rhoT', rho_kg_m3, T_K, this.throat, this.throat)
+    } catch (error) {
+      if (error instanceof Problem) return null
+      throw error
+    }
+    this.evaluations += this.throat.evaluations
+    return this.throat
+  }
+
+  /**
+   * Bisection on pressure for where the flow reaches the speed of sound. The speed jumps where the isentrope crosses the
+   * saturation line: the throat may then lie on the line itself. False where it would lie beyond the fluid's equation.
+   */
+  private chokeByPressure(up: State): boolean {
+    let high = up.p_Pa
+    let low = 0.05 * up.p_Pa
+    let G = 0
+    let beyond = false
+    for (let count = 0; count < MAX_BISECTIONS && high - low > 1e-10 * high; count++) {
+      const p = count === 0 ? 0.55 * high : (low + high) / 2
+      const flux = this.subsonic(up, p)
+      if (flux >= 0) {
+        high = p
+        G = flux
+      } else {
+        low = p
+        beyond = flux === BEYOND
+      }
+    }
+    this.chokedG = G
+    this.chokedP_Pa = high
+    return !beyond
+  }
+}
+
+/** -(∂ ln p/∂ ln v) at constant entropy. */
+const isentropicExponent = (s: State) => (s.rho_kg_m3 * soundSpeedSquared(s)) / s.p_Pa
+
+/** (h0 - h) ρ0/p0 of a perfect gas of this exponent, for a pressure ratio. */
+const powerRise = (ratio: number, exponent: number) => {
+  const power = (exponent - 1) / exponent
+  return power === 0 ? -Math.log(ratio) : -Math.expm1(power * Math.log(ratio)) / power
+}
+
+function frozenFlux(up: State, p_down_Pa: number): number {
+  const exponent = isentropicExponent(up)
+  const ratio = p_down_Pa / up.p_Pa
+  return ratio ** (1 / exponent) * Math.sqrt(2 * up.rho_kg_m3 * up.p_Pa * powerRise(ratio, exponent))
+}
