@@ -48,6 +48,7 @@ const GROW = 5
 /** Memory of the last step's error in the step size (a PI controller): smooths the sequence of steps. */
 const MEMORY = 0.04
 const EVENT_TOLERANCE = 1e-12
+const EVENT_OVERDUE = 1e-9
 /** A step this short, relative to the time reached, is none. */
 const SHORTEST = 1e-14
 
@@ -94,6 +95,7 @@ class Integration {
     options.onPoint?.(0, this.stepper.y, this.stepper.f, null)
     const already = values.findIndex((value, i) => system.events[i].terminal && value <= 0)
     if (already >= 0) return this.outcome('event', already)
+    this.overdue()
     let h = Math.min(this.firstStep(), maxStep)
     let lastError = 1e-4
     let ceiling = GROW
@@ -121,7 +123,7 @@ class Integration {
         h = Math.min(this.firstStep(), hNext)
         continue
       }
-      h = hNext
+      h = this.overdue() ? Math.min(this.firstStep(), hNext) : hNext
       if (this.stepper.stiff && options.method !== 'explicit') this.goStiff()
     }
     return this.outcome('end')
@@ -177,6 +179,20 @@ class Integration {
     this.system.rates(this.point, this.pointRates)
     this.system.eventValues(this.valuesAt)
     return this.valuesAt[index]
+  }
+
+  /**
+   * An interruption that is past already where a step begins (it never was ahead, or came while another was handled)
+   * happens there. At most one a step, so that two that call each other cannot hold the integration up.
+   */
+  private overdue(): boolean {
+    const { system, values } = this
+    const event = values.findIndex((value, i) => !system.events[i].terminal && value < -EVENT_OVERDUE)
+    if (event < 0) return false
+    system.passed?.(event)
+    this.point.set(this.stepper.y)
+    this.begin()
+    return true
   }
 
   /** Stands on `point`. */

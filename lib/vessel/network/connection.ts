@@ -14,65 +14,155 @@ export interface Boundary {
 
 export type End = { readonly volume: ControlVolume } | { readonly boundary: Boundary }
 
-/** Nearer to equal pressures than this, relative, flow goes with the pressure difference: its root has no slope there. */
-export const LAMINAR = 1e-6
+/** Pressures this near each other, relative, count as equal. */
+export const EQUAL = 1e-6
+
+/**
+ * How a flow comes about. Where pressures have become equal, a path's law has no slope and a tiny difference passes
+ * whatever is asked of it: the flow is then the one that keeps them equal.
+ * - `driven`: by the pressure difference, after the law of its path.
+ * - `level`: pressures are equal; heat alone makes gas pass.
+ * - `shut`: a check valve is closed against the flow.
+ */
+export type Mode = 'driven' | 'level' | 'shut'
+
+interface Parts {
+  readonly from: End
+  readonly to: End
+  readonly forward: Resistance
+  /** Absent where a check valve closes against it. */
+  readonly backward: Resistance | null
+  readonly draw: Draw
+  /** The flow is what makes the pressure of the volume it serves change so fast. */
+  readonly ramp_Pa_s: number | null
+}
 
 /** A flow from one end to the other, positive that way. */
 export class Connection {
+  readonly from: End
+  readonly to: End
+  mode: Mode = 'driven'
   flow_kg_s = 0
   /** Stagnation enthalpy of what flows, J/kg. */
   h_J_kg = 0
+  /** The flow that would keep pressures equal, or follow the ramp, at the point last worked out. */
+  asked_kg_s = 0
+  /** What the path lets through while pressures count as equal. */
+  private most_kg_s = 0
+  /** Which way it is driven. */
+  private sense = 1
   private fromVersion = -1
   private toVersion = -1
 
-  constructor(
-    readonly from: End,
-    readonly to: End,
-    private readonly forward: Resistance,
-    /** Absent where a check valve closes against it. */
-    private readonly backward: Resistance | null,
-    private readonly draw: Draw,
-    /** The flow is what makes the pressure of the volume it serves change so fast. */
-    readonly ramp_Pa_s: number | null = null,
-  ) {}
+  constructor(private readonly parts: Parts) {
+    this.from = parts.from
+    this.to = parts.to
+  }
 
   get evaluations() {
-    return this.forward.evaluations + (this.backward?.evaluations ?? 0)
+    return this.parts.forward.evaluations + (this.parts.backward?.evaluations ?? 0)
   }
 
   get drop_Pa() {
     return pressureOf(this.from) - pressureOf(this.to)
   }
 
-  /** How far from equal the pressures are, relative; a flow that a check valve stops counts as at rest. */
+  /**
+   * How far the pressures still are from equal, in units of what counts as equal; below zero once they have passed each
+   * other. Where a check valve is shut they count as equal.
+   */
   get unequal() {
-    const drop = this.drop_Pa
-    if (drop < 0 && !this.backward) return 0
-    return Math.abs(drop) / Math.max(pressureOf(this.from), pressureOf(this.to))
+    if (this.mode !== 'driven') return 0
+    return (this.sense * this.drop_Pa) / (EQUAL * Math.max(pressureOf(this.from), pressureOf(this.to)))
   }
 
+  /** Whether its flow follows from how pressures are to go. */
+  get follows() {
+    return this.mode !== 'driven' || this.parts.ramp_Pa_s !== null
+  }
+
+  /** Takes the states of both ends as they are; where it follows, `follow` then finds the flow. */
   evaluate() {
     const fromVersion = versionOf(this.from)
     const toVersion = versionOf(this.to)
     if (fromVersion === this.fromVersion && toVersion === this.toVersion) return
+    const { forward, backward } = this.parts
     const drop = this.drop_Pa
-    this.flow_kg_s = 0
-    if (drop > 0) this.flow_kg_s = this.flow(this.forward, this.from, this.to)
-    else if (drop < 0 && this.backward) this.flow_kg_s = -this.flow(this.backward, this.to, this.from)
+    if (this.ramping) {
+      // The flow of a moment ago is a good beginning for `follow`.
+      this.law(forward, this.from, this.to)
+    } else if (this.mode === 'driven') {
+      this.flow_kg_s = 0
+      if (drop > 0) this.flow_kg_s = this.law(forward, this.from, this.to)
+      else if (drop < 0 && backward) this.flow_kg_s = -this.law(backward, this.to, this.from)
+    } else {
+      this.most_kg_s = this.law(forward, this.from, this.to, pressureOf(this.from) * (1 - EQUAL))
+    }
     this.fromVersion = fromVersion
     this.toVersion = toVersion
   }
 
-  private flow(resistance: Resistance, from: End, to: End): number {
-    const p_down = pressureOf(to)
-    const up = 'volume' in from ? from.volume.rest(this.draw) : from.boundary.rest?.(p_down)
+  private law(resistance: Resistance, from: End, to: End, p_down = pressureOf(to)): number {
+    const up = 'volume' in from ? from.volume.rest(this.parts.draw) : from.boundary.rest?.(p_down)
     if (!up) return 0
     this.h_J_kg = up.h_J_kg
-    const p_up = pressureOf(from)
-    const part = (p_up - p_down) / (LAMINAR * p_up)
-    if (part >= 1) return resistance.flow_kg_s(up, p_down)
-    // Joins the law of the path with its value and, for a root, its slope.
-    return resistance.flow_kg_s(up, p_up * (1 - LAMINAR)) * part * (1.25 - 0.25 * part * part)
+    return resistance.flow_kg_s(up, p_down)
+  }
+
+  /** Finds the flow asked for, with heat as it stands; returns by how much it changed, relative. */
+  follow(): number {
+    if (!this.follows) return 0
+    const before = this.flow_kg_s
+    const still = this.pressureRate(0)
+    const each = this.pressureRate(1) - still
+    this.asked_kg_s = (this.target() - still) / each
+    if (this.mode === 'shut') this.flow_kg_s = 0
+    else if (this.mode === 'driven') this.flow_kg_s = this.drop_Pa > 0 ? Math.max(0, this.asked_kg_s) : 0
+    else this.flow_kg_s = this.parts.backward ? this.asked_kg_s : Math.max(0, this.asked_kg_s)
+    return this.flow_kg_s === before ? 0 : Math.abs(this.flow_kg_s - before) / Math.abs(this.flow_kg_s)
+  }
+
+  /** Of the drop; for a ramp of the pressure of the volume it serves. */
+  private pressureRate(flow: number): number {
+    const { from, to } = this
+    const energy = flow * this.h_J_kg
+    let rate = 0
+    if ('volume' in to) rate -= to.volume.pressureRate(flow, energy + to.volume.inner.heat_W)
+    if ('volume' in from && !(this.ramping && 'volume' in to)) {
+      rate += from.volume.pressureRate(-flow, -energy + from.volume.inner.heat_W)
+    }
+    return rate
+  }
+
+  private target() {
+    return this.ramping ? -(this.parts.ramp_Pa_s ?? 0) : 0
+  }
+
+  private get ramping() {
+    return this.mode === 'driven' && this.parts.ramp_Pa_s !== null
+  }
+
+  /** Falls to zero where the mode is to change. */
+  readonly modeEnds = (): number => {
+    const most = Math.max(this.most_kg_s, Number.MIN_VALUE)
+    switch (this.mode) {
+      case 'driven':
+        return Math.log(Math.max(this.unequal, 1e-9))
+      case 'level':
+        return this.parts.backward
+          ? 1 - Math.abs(this.asked_kg_s) / most
+          : Math.min(1 - this.asked_kg_s / most, this.asked_kg_s / most)
+      case 'shut':
+        return Math.max(-this.drop_Pa / (EQUAL * pressureOf(this.to)), -this.asked_kg_s / most)
+    }
+  }
+
+  changeMode() {
+    if (this.mode === 'level')
+      this.mode = this.parts.backward || 2 * this.asked_kg_s > this.most_kg_s ? 'driven' : 'shut'
+    else this.mode = 'level'
+    this.sense = this.drop_Pa < 0 && this.parts.backward ? -1 : 1
+    this.fromVersion = -1
   }
 }
 

@@ -7,9 +7,11 @@ import type { ControlVolume } from './volume'
 export interface Watch {
   readonly terminal: boolean
   value(): number
+  /** What happens where it interrupts. */
+  passed?(): void
 }
 
-const RAMP_ROUNDS = 30
+const FOLLOW_ROUNDS = 30
 
 /** Heat into the contents and out of the shell, J. */
 const PER_VOLUME = 2
@@ -72,29 +74,15 @@ export class Network implements OdeSystem {
     }
   }
 
-  /** Heat and the flows that depend on it: a ramp's flow follows from the heat, which a jet makes depend on the flow. */
+  /** Heat and the flows that follow from it; a jet makes heat depend on the flow in its turn. */
   private passHeat() {
     const { volumes, connections } = this
-    for (let round = 0; round < RAMP_ROUNDS; round++) {
+    for (let round = 0; round < FOLLOW_ROUNDS; round++) {
       for (const volume of volumes) volume.passHeat(this.inflow(volume))
       let change = 0
-      for (const connection of connections) change = Math.max(change, this.follow(connection))
+      for (const connection of connections) change = Math.max(change, connection.follow())
       if (change <= 1e-13) return
     }
-  }
-
-  /** Sets the flow of a ramp; returns by how much it changed, relative. */
-  private follow(connection: Connection): number {
-    if (connection.ramp_Pa_s === null || !(connection.drop_Pa > 0)) return 0
-    const served = volumeOf(connection.to) ?? volumeOf(connection.from)
-    if (!served) return 0
-    const sign = volumeOf(connection.to) ? 1 : -1
-    const still = served.pressureRate(0, served.inner.heat_W)
-    const each = served.pressureRate(sign, sign * connection.h_J_kg + served.inner.heat_W) - still
-    const flow = Math.max(0, (sign * connection.ramp_Pa_s - still) / each)
-    const change = flow === connection.flow_kg_s ? 0 : Math.abs(flow / connection.flow_kg_s - 1)
-    connection.flow_kg_s = flow
-    return change
   }
 
   /** Net mass flow into a volume at the point last worked out. */
@@ -134,6 +122,10 @@ export class Network implements OdeSystem {
 
   eventValues(out: Float64Array) {
     for (let i = 0; i < this.events.length; i++) out[i] = this.events[i].value()
+  }
+
+  passed(event: number) {
+    this.events[event].passed?.()
   }
 
   jacobian(y: Float64Array, f: Float64Array, out: Float64Array) {

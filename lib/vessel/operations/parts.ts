@@ -48,11 +48,12 @@ interface Link {
 export function link({ from, to, fluid, path, mass_kg, draw = 'mixed', bothWays, wrap }: Link): Connection {
   checkPath(path)
   const make = () => {
-    const inner = !path || path.kind === 'ramp' ? new FixedFlow(path ? 0 : mass_kg) : resistanceOf(path, fluid)
+    const inner = !path || path.kind === 'ramp' ? new FixedFlow(path ? Infinity : mass_kg) : resistanceOf(path, fluid)
     return wrap ? wrap(inner) : inner
   }
   const open = path?.check === undefined ? bothWays : !path.check
-  return new Connection(from, to, make(), open ? make() : null, draw, path?.kind === 'ramp' ? path.rate_Pa_s : null)
+  const ramp_Pa_s = path?.kind === 'ramp' ? path.rate_Pa_s : null
+  return new Connection({ from, to, forward: make(), backward: open ? make() : null, draw, ramp_Pa_s })
 }
 
 export const ofVolume = (volume: ControlVolume): End => ({ volume })

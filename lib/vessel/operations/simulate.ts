@@ -10,7 +10,7 @@ import { balanceOf } from './balance'
 import { begin } from './begin'
 import { report } from './report'
 import type { Numerics } from './requests'
-import { coldWatch, settledWatch, watchesFor } from './watches'
+import { coldWatch, modeWatch, settledWatch, watchesFor, type NamedWatch } from './watches'
 
 const DEFAULT_RTOL = 1e-6
 /** A balance has no time to resolve: it is integrated over the mass that passes, nearly exactly. */
@@ -38,7 +38,7 @@ export function simulate(plan: Plan): Run[] {
   const watches = watchesFor(volumes[0], stops)
   // A run that is to last a given time goes on when nothing changes any more; any other could then never end.
   if (stops.settled || stops.for_s === undefined) watches.push(settledWatch(network))
-  watches.push(coldWatch(volumes))
+  watches.push(coldWatch(volumes), ...plan.connections.map(modeWatch))
   network.events = watches
   const recorders = volumes.map((_, i) => new Recorder(network, i, plan.from[i].shell.mean_K))
   const horizon = timeless ? BALANCE_HORIZON : (plan.horizon_s ?? DEFAULT_HORIZON_s)
@@ -60,7 +60,7 @@ export function simulate(plan: Plan): Run[] {
   )
 }
 
-function whatStopped(plan: Plan, outcome: Outcome, event: StoppedBy | null, recorder: Recorder): StoppedBy {
+function whatStopped(plan: Plan, outcome: Outcome, event: NamedWatch['name'] | null, recorder: Recorder): StoppedBy {
   const { stops } = plan
   const at = () => {
     const { p_Pa, T_K } = recorder.trace
@@ -72,7 +72,8 @@ function whatStopped(plan: Plan, outcome: Outcome, event: StoppedBy | null, reco
       if (event === 'settled' && !stops.settled && wished(stops)) {
         throw new Problem('impossible', `it settles at ${at()}${after} without reaching ${wished(stops)}`)
       }
-      return event ?? 'settled'
+      if (event === null || event === 'mode') throw new Error('a change of mode does not end a run')
+      return event
     case 'end':
       if (stops.for_s !== undefined) return 'for'
       throw new Problem('unreached', `it has come to ${at()}${after}, and not to ${wished(stops) ?? 'rest'}`)

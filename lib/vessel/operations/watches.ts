@@ -1,11 +1,10 @@
 import type { Network, Watch } from '../network/system'
 import type { Connection } from '../network/connection'
-import { LAMINAR } from '../network/connection'
 import type { ControlVolume } from '../network/volume'
 import type { StoppedBy, Stops } from '../run'
 
 export interface NamedWatch extends Watch {
-  readonly name: StoppedBy
+  readonly name: StoppedBy | 'mode'
 }
 
 /** At rest within this, K. */
@@ -28,6 +27,11 @@ export function watchesFor(volume: ControlVolume, stops: Stops): NamedWatch[] {
   return watches
 }
 
+/** Where a flow comes about in another way from there on. */
+export function modeWatch(connection: Connection): NamedWatch {
+  return { name: 'mode', terminal: false, value: connection.modeEnds, passed: () => connection.changeMode() }
+}
+
 /** Past the triple point of any volume. */
 export function coldWatch(volumes: readonly ControlVolume[]): NamedWatch {
   return {
@@ -43,13 +47,11 @@ export function settledWatch({ volumes, connections }: Network): NamedWatch {
     name: 'settled',
     terminal: true,
     value: () => {
-      const unrest = Math.max(0, ...connections.map(unequal), ...volumes.map(unsettledHeat))
+      const unrest = Math.max(0, ...connections.map((connection) => connection.unequal), ...volumes.map(unsettledHeat))
       return Math.log(Math.max(unrest, 1e-9))
     },
   }
 }
-
-const unequal = (connection: Connection) => connection.unequal / LAMINAR
 
 function unsettledHeat(volume: ControlVolume): number {
   if (volume.cells === 0) return 0
