@@ -49,6 +49,7 @@ const GROW = 5
 const MEMORY = 0.04
 const EVENT_TOLERANCE = 1e-12
 const EVENT_OVERDUE = 1e-9
+const EVENT_TIE = 1e-9
 /** A step this short, relative to the time reached, is none. */
 const SHORTEST = 1e-14
 
@@ -169,7 +170,9 @@ class Integration {
       const g = (theta: number) => this.eventAt(index, theta)
       const atEnd = first.theta < 1 ? g(first.theta) : valuesNew[index]
       if (atEnd > 0) continue
-      first = { index, theta: fallToZero(g, 0, values[index], first.theta, atEnd, EVENT_TOLERANCE) }
+      const theta = fallToZero(g, 0, values[index], first.theta, atEnd, EVENT_TOLERANCE)
+      // Of two at once the one listed first counts.
+      if (first.index < 0 || theta < first.theta * (1 - EVENT_TIE)) first = { index, theta }
     }
     return first
   }
