@@ -1,5 +1,5 @@
 import type { Fluid, State } from '@/lib/fluids'
-import type { Path } from './path'
+import type { Path } from './paths/kinds'
 import type { Supply } from './supply'
 import type { Vessel } from './vessel'
 
@@ -16,6 +16,10 @@ export interface Stops {
   /** Vapour quality of a vessel of two phases; 1: no liquid left. */
   readonly until_x?: number
   readonly for_s?: number
+  /** Until the flow has fallen to this, either way. */
+  readonly until_flow_kg_s?: number
+  /** Until pressures are equal within 1e-6, so that only heat can make more gas pass. */
+  readonly level?: boolean
   /** Until nothing changes any more: pressures equal within 1e-6, temperatures within 0.01 K of where they rest. */
   readonly settled?: boolean
 }
@@ -26,6 +30,8 @@ export type StoppedBy =
   | 'until_T'
   | 'until_m'
   | 'until_x'
+  | 'until_flow'
+  | 'level'
   | 'for'
   | 'settled'
   /** The fluid has come to its triple point, below which its solid is not modelled. */

@@ -67,7 +67,7 @@ function fromBank(
   return { ...run, supply: { ...bank, contents: each }, ...(through ? { path: through } : {}) }
 }
 
-function highest(supply: Supply): number {
+export function highest(supply: Supply): number {
   switch (supply.kind) {
     case 'header':
     case 'room_air':

@@ -2,7 +2,7 @@ import { Problem } from '@/lib/errors'
 import type { Fluid } from '@/lib/fluids'
 import { Connection, type Boundary, type End } from '../network/connection'
 import { ControlVolume } from '../network/volume'
-import type { Path } from '../path'
+import type { Path } from '../paths/kinds'
 import { resistanceOf } from '../paths/build'
 import { FixedFlow } from '../paths/given'
 import type { Resistance } from '../paths/resistance'
@@ -68,7 +68,7 @@ export function sameFluid(one: Fluid, other: Fluid) {
   }
 }
 
-function checkPath(path: Path | undefined): void {
+export function checkPath(path: Path | undefined): void {
   if (!path) return
   const positive = (value: number, words: string) => {
     if (!(value > 0 && Number.isFinite(value))) throw new Problem('range', `${words} must be more than nothing`)

@@ -1,4 +1,4 @@
-import type { Path } from '../path'
+import type { Path } from '../paths/kinds'
 import type { Draw, Heat, Run, Stops } from '../run'
 import type { Supply } from '../supply'
 

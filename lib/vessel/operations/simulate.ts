@@ -1,11 +1,11 @@
 import { Problem } from '@/lib/errors'
 import { integrate, type Outcome } from '@/lib/numerics/ode'
-import type { Connection } from '../network/connection'
+import { EQUAL, type Connection } from '../network/connection'
 import { Recorder } from '../network/recorder'
 import { Network } from '../network/system'
 import type { ControlVolume } from '../network/volume'
 import type { Operation, Run, StoppedBy, Stops } from '../run'
-import { bar, celsius, duration } from '../words'
+import { bar, celsius, duration, kilograms, kilogramsPerSecond } from '../words'
 import { balanceOf } from './balance'
 import { begin } from './begin'
 import { report } from './report'
@@ -35,7 +35,7 @@ export function simulate(plan: Plan): Run[] {
   const { volumes, stops, timeless } = plan
   const network = new Network(volumes, plan.connections)
   const y0 = begin(plan, network)
-  const watches = watchesFor(volumes[0], stops)
+  const watches = watchesFor(volumes[0], plan.connections, stops)
   // A run that is to last a given time goes on when nothing changes any more; any other could then never end.
   if (stops.settled || stops.for_s === undefined) watches.push(settledWatch(network))
   watches.push(coldWatch(volumes), ...plan.connections.map(modeWatch))
@@ -70,6 +70,7 @@ function whatStopped(plan: Plan, outcome: Outcome, event: NamedWatch['name'] | n
   switch (outcome.status) {
     case 'event':
       if (event === 'settled' && !stops.settled && wished(stops)) {
+        if (reachedAsNearAsCan(stops, recorder)) return 'until_p'
         throw new Problem('impossible', `it settles at ${at()}${after} without reaching ${wished(stops)}`)
       }
       if (event === null || event === 'mode') throw new Error('a change of mode does not end a run')
@@ -85,11 +86,17 @@ function whatStopped(plan: Plan, outcome: Outcome, event: NamedWatch['name'] | n
   }
 }
 
+/** A stop at the very pressure of what it is joined to. */
+function reachedAsNearAsCan({ until_p_Pa = NaN }: Stops, { trace: { p_Pa } }: Recorder) {
+  return Math.abs(p_Pa[p_Pa.length - 1] / until_p_Pa - 1) <= 2 * EQUAL
+}
+
 function wished(stops: Stops): string | null {
   const words: string[] = []
   if (stops.until_p_Pa !== undefined) words.push(bar(stops.until_p_Pa))
   if (stops.until_T_K !== undefined) words.push(celsius(stops.until_T_K))
-  if (stops.until_m_kg !== undefined) words.push(`${stops.until_m_kg} kg`)
+  if (stops.until_m_kg !== undefined) words.push(kilograms(stops.until_m_kg))
   if (stops.until_x !== undefined) words.push(`quality ${stops.until_x}`)
+  if (stops.until_flow_kg_s !== undefined) words.push(kilogramsPerSecond(stops.until_flow_kg_s))
   return words.length ? words.join(' or ') : null
 }

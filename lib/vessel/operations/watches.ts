@@ -13,7 +13,7 @@ const RESTING_K = 0.01
 const COLD_MARGIN = 1e-5
 
 /** The stops of a run as they stand for this volume, which is where it starts. */
-export function watchesFor(volume: ControlVolume, stops: Stops): NamedWatch[] {
+export function watchesFor(volume: ControlVolume, connections: readonly Connection[], stops: Stops): NamedWatch[] {
   const watches: NamedWatch[] = []
   const reach = (name: StoppedBy, target: number | undefined, value: () => number, scale = Math.abs(target ?? 1)) => {
     if (target === undefined) return
@@ -24,6 +24,12 @@ export function watchesFor(volume: ControlVolume, stops: Stops): NamedWatch[] {
   reach('until_T', stops.until_T_K, () => volume.gas.T_K)
   reach('until_m', stops.until_m_kg, () => volume.m_kg)
   reach('until_x', stops.until_x, () => qualityOf(volume.gas.x), 1)
+  const { until_flow_kg_s: least } = stops
+  if (least !== undefined) {
+    const flow = () => Math.max(0, ...connections.map((connection) => Math.abs(connection.flow_kg_s)))
+    watches.push({ name: 'until_flow', terminal: true, value: () => flow() / least - 1 })
+  }
+  if (stops.level) watches.push({ name: 'level', terminal: true, value: () => logOf(inequality(connections)) })
   return watches
 }
 
@@ -46,12 +52,14 @@ export function settledWatch({ volumes, connections }: Network): NamedWatch {
   return {
     name: 'settled',
     terminal: true,
-    value: () => {
-      const unrest = Math.max(0, ...connections.map((connection) => connection.unequal), ...volumes.map(unsettledHeat))
-      return Math.log(Math.max(unrest, 1e-9))
-    },
+    value: () => logOf(Math.max(inequality(connections), ...volumes.map(unsettledHeat))),
   }
 }
+
+const inequality = (connections: readonly Connection[]) => Math.max(0, ...connections.map((c) => c.unequal))
+
+/** Of something that counts as nothing once it is at or below 1: even over many powers of ten, zero at 1. */
+const logOf = (value: number) => Math.log(Math.max(value, 1e-9))
 
 function unsettledHeat(volume: ControlVolume): number {
   if (volume.cells === 0) return 0

@@ -1,6 +1,6 @@
 import { Problem } from '@/lib/errors'
 import type { Fluid } from '@/lib/fluids'
-import type { Path } from '../path'
+import type { Path } from './kinds'
 import { FixedFlow, Pump } from './given'
 import { Orifice } from './orifice'
 import type { Resistance } from './resistance'
