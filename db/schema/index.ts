@@ -1,0 +1,7 @@
+export * from './memberships'
+export * from './projects'
+export * from './sheet-states'
+export * from './sheet-updates'
+export * from './sheets'
+export * from './users'
+export * from './workspaces'
