@@ -83,7 +83,7 @@ export default tseslint.config(
       'node_modules/**',
       '.next/**',
       'data/**',
-      'lib/formula/parser*.js',
+      'lib/formula/parser*.ts',
       'next-env.d.ts',
       'db/migrations/**',
       'pictures/**',

@@ -127,3 +127,17 @@ export interface Scope {
   readonly rows: readonly { readonly id: string; readonly label: string }[]
   readonly things: readonly { readonly id: string; readonly name: string; readonly type: Type }[]
 }
+
+/** A formula made ready to run, or why it cannot be. */
+export type Compilation =
+  | {
+      readonly ok: true
+      readonly type: Type
+      /** What `run` is handed the values of, in this order. */
+      readonly reads: readonly Read[]
+      /** Only a value, a text or a name: nothing is worked out. */
+      readonly literal: boolean
+      /** Never throws for a user's mistake: that comes back as a Fault. */
+      readonly run: (values: readonly Value[], surroundings: Surroundings) => Value
+    }
+  | { readonly ok: false; readonly fault: Fault }

@@ -1,0 +1,12 @@
+import type { FunctionSpec, Vocabulary } from '../types'
+import { LOGICAL } from '../typing'
+import { logicFunctions } from './logic'
+import { numberFunctions } from './numbers'
+
+/** Functions that keep the names of the open standard for spreadsheets, with our rules of dimensions. */
+export const STANDARD_FUNCTIONS: readonly FunctionSpec[] = [...numberFunctions, ...logicFunctions]
+
+export const STANDARD_WORDS: Vocabulary['words'] = new Map([
+  ['true', { type: LOGICAL, value: true, help: 'yes' }],
+  ['false', { type: LOGICAL, value: false, help: 'no' }],
+])
