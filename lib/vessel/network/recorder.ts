@@ -4,30 +4,41 @@ import { meanTemperature_K } from '../shell/temperatures'
 import type { Network } from './system'
 
 /** What is read off a volume at one moment. */
-interface Reading {
-  p_Pa: number
-  T_K: number
-  shellMean_K: number
-  shellInner_K: number
-  shellOuter_K: number
-  flow_kg_s: number
+type Reading = Record<Exclude<keyof Trace, 't_s'>, number>
+
+/** A value whose course within a step is watched, with its rate. */
+interface Slope {
+  readonly value: number
+  readonly rate: number
+  /** A plot shows a straight line where the curve is nearer to it than this. */
+  readonly visible: number
 }
 
-type Columns = { -readonly [Key in keyof Trace]: number[] }
-
-export interface Extremes {
-  T_peak_K: number
-  T_low_K: number
-  p_peak_Pa: number
-  p_low_Pa: number
-  shell_peak_K: number
-  shell_low_K: number
-  flow_peak_kg_s: number
+interface Moment {
+  readonly reading: Reading
+  readonly slopes: readonly Slope[]
 }
+
+const COLUMNS = [
+  'p_Pa',
+  'T_K',
+  'm_kg',
+  'flow_kg_s',
+  'shellMean_K',
+  'shellInner_K',
+  'shellOuter_K',
+  'otherP_Pa',
+  'otherT_K',
+] as const satisfies readonly (keyof Reading)[]
+
+/** How far from a straight line a curve may be drawn, of its value for a pressure, in kelvins for a temperature. */
+const VISIBLE_PART = 0.005
+const VISIBLE_K = 0.5
+const MOST_BETWEEN = 7
 
 /** Follows one volume through a run: its trace, and its highest and lowest values, found within steps too. */
 export class Recorder {
-  readonly trace: Columns = {
+  readonly trace: { -readonly [Key in keyof Trace]: number[] } = {
     t_s: [],
     p_Pa: [],
     T_K: [],
@@ -39,7 +50,7 @@ export class Recorder {
     otherP_Pa: [],
     otherT_K: [],
   }
-  readonly extremes: Extremes = {
+  readonly extremes = {
     T_peak_K: -Infinity,
     T_low_K: Infinity,
     p_peak_Pa: -Infinity,
@@ -50,80 +61,96 @@ export class Recorder {
   }
   private readonly point: Float64Array
   private readonly pointRates: Float64Array
-  /** Values and rates at the last point whose course within a step is watched: T, p, shell. */
-  private last = { values: [0, 0, 0], rates: [0, 0, 0] }
+  private last: Moment | null = null
 
   constructor(
     private readonly network: Network,
     private readonly index: number,
     /** Temperature of a shell that takes no part. */
     private readonly idleShell_K: number,
+    private readonly keepsTrace: boolean,
   ) {
     this.point = new Float64Array(network.size)
     this.pointRates = new Float64Array(network.size)
   }
 
-  /** To be called at each accepted point, where the network's rates have just been worked out. */
-  at(t: number) {
-    const reading = this.read()
-    const { trace, network } = this
-    const other = network.volumes.length > 1 ? network.volumes[1 - this.index] : null
-    trace.t_s.push(t)
-    trace.p_Pa.push(reading.p_Pa)
-    trace.T_K.push(reading.T_K)
-    trace.m_kg.push(network.volumes[this.index].m_kg)
-    trace.flow_kg_s.push(reading.flow_kg_s)
-    trace.shellMean_K.push(reading.shellMean_K)
-    trace.shellInner_K.push(reading.shellInner_K)
-    trace.shellOuter_K.push(reading.shellOuter_K)
-    trace.otherP_Pa.push(other ? other.gas.p_Pa : NaN)
-    trace.otherT_K.push(other ? other.gas.T_K : NaN)
-    this.note(reading)
+  /** The last moment added. */
+  get end(): Reading {
+    if (!this.last) throw new Error('nothing has been recorded')
+    return this.last.reading
   }
 
-  /** Rates at the point just recorded; compared with those before, they tell of a peak within the step. */
-  slopes(f: Float64Array): { values: number[]; rates: number[] } {
+  /** What the volume is like where the network's rates have just been worked out to be f. */
+  look(f: Float64Array): Moment {
     const volume = this.network.volumes[this.index]
+    const slopes: Slope[] = [
+      { value: volume.gas.T_K, rate: volume.dT_K_s, visible: VISIBLE_K },
+      { value: volume.gas.p_Pa, rate: volume.dp_Pa_s, visible: VISIBLE_PART * volume.gas.p_Pa },
+    ]
     const first = this.network.at[this.index] + 2
-    const shellRate =
-      volume.cells > 0
-        ? f[first] / volume.wall.mass_kg[0] / volume.wall.caloric[0].capacity_J_kgK(volume.cells_K[0])
-        : 0
-    const shell = volume.cells > 0 ? volume.cells_K[0] : 0
-    return { values: [volume.gas.T_K, volume.gas.p_Pa, shell], rates: [volume.dT_K_s, volume.dp_Pa_s, shellRate] }
+    for (const cell of volume.cells > 1 ? [0, volume.cells - 1] : volume.cells === 1 ? [0] : []) {
+      const T_K = volume.cells_K[cell]
+      const capacity = volume.wall.mass_kg[cell] * volume.wall.caloric[cell].capacity_J_kgK(T_K)
+      slopes.push({ value: T_K, rate: f[first + cell] / capacity, visible: VISIBLE_K })
+    }
+    return { reading: this.read(), slopes }
   }
 
-  /** Looks for turning points within the step that led to the point with these slopes. Moves the network's state. */
-  within(step: StepView | null, now: { values: number[]; rates: number[] }) {
-    const before = this.last
+  /** Adds a moment and what happened in the step that led to it. Moves the network's state. */
+  add(t: number, now: Moment, step: StepView | null) {
+    if (step && this.last) this.between(step, this.last, now)
+    this.note(t, now.reading)
     this.last = now
-    if (!step) return
+  }
+
+  /** Turning points within a step, and as many points more as a plot needs to look smooth. */
+  private between(step: StepView, before: Moment, now: Moment) {
     const length = step.h * step.end
-    for (let i = 0; i < now.rates.length; i++) {
-      if (!(before.rates[i] * now.rates[i] < 0)) continue
-      const theta = turningPoint(before.values[i], now.values[i], before.rates[i] * length, now.rates[i] * length)
+    const fractions: number[] = []
+    let bend = 0
+    now.slopes.forEach(({ value, rate, visible }, i) => {
+      const { value: value0, rate: rate0 } = before.slopes[i]
+      // Half way, the cubic through both ends lies this far from the straight line.
+      bend = Math.max(bend, (Math.abs(rate0 - rate) * length) / 8 / visible)
+      if (rate0 * rate < 0) fractions.push(turningPoint(value0, value, rate0 * length, rate * length))
+    })
+    if (this.keepsTrace) {
+      const more = Math.min(MOST_BETWEEN, Math.ceil(Math.sqrt(bend)) - 1)
+      for (let i = 1; i <= more; i++) fractions.push(i / (more + 1))
+    }
+    fractions.sort((a, b) => a - b)
+    for (const theta of fractions) {
       step.at(theta * step.end, this.point)
       this.network.rates(this.point, this.pointRates)
-      this.note(this.read())
+      this.note(step.t + theta * length, this.read())
     }
   }
 
   private read(): Reading {
-    const volume = this.network.volumes[this.index]
-    const { wall, cells_K } = volume
-    const moving = wall.cells > 0
+    const { network } = this
+    const volume = network.volumes[this.index]
+    const { wall, cells_K, gas } = volume
+    const moves = wall.cells > 0
     const even = volume.cells === 0
+    const other = network.volumes.length > 1 ? network.volumes[1 - this.index].gas : null
     return {
-      p_Pa: volume.gas.p_Pa,
-      T_K: volume.gas.T_K,
-      shellMean_K: moving ? meanTemperature_K(wall, cells_K) : this.idleShell_K,
-      shellInner_K: moving ? (even ? cells_K[0] : volume.inner.face_K) : this.idleShell_K,
-      shellOuter_K: moving ? (even ? cells_K[0] : volume.outer.face_K) : this.idleShell_K,
-      flow_kg_s: this.network.inflow(volume),
+      p_Pa: gas.p_Pa,
+      T_K: gas.T_K,
+      m_kg: volume.m_kg,
+      flow_kg_s: network.inflow(volume),
+      shellMean_K: moves ? meanTemperature_K(wall, cells_K) : this.idleShell_K,
+      shellInner_K: moves ? (even ? cells_K[0] : volume.inner.face_K) : this.idleShell_K,
+      shellOuter_K: moves ? (even ? cells_K[0] : volume.outer.face_K) : this.idleShell_K,
+      otherP_Pa: other ? other.p_Pa : NaN,
+      otherT_K: other ? other.T_K : NaN,
     }
   }
 
-  private note(reading: Reading) {
+  private note(t: number, reading: Reading) {
+    if (this.keepsTrace) {
+      this.trace.t_s.push(t)
+      for (const column of COLUMNS) this.trace[column].push(reading[column])
+    }
     const e = this.extremes
     e.T_peak_K = Math.max(e.T_peak_K, reading.T_K)
     e.T_low_K = Math.min(e.T_low_K, reading.T_K)

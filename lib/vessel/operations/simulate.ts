@@ -40,16 +40,15 @@ export function simulate(plan: Plan): Run[] {
   if (stops.settled || stops.for_s === undefined) watches.push(settledWatch(network))
   watches.push(coldWatch(volumes), ...plan.connections.map(modeWatch))
   network.events = watches
-  const recorders = volumes.map((_, i) => new Recorder(network, i, plan.from[i].shell.mean_K))
+  const recorders = volumes.map((_, i) => new Recorder(network, i, plan.from[i].shell.mean_K, !timeless))
   const horizon = timeless ? BALANCE_HORIZON : (plan.horizon_s ?? DEFAULT_HORIZON_s)
   const outcome = integrate(network, y0, {
     until: stops.for_s ?? horizon,
     rtol: timeless ? BALANCE_RTOL : (plan.rtol ?? DEFAULT_RTOL),
     method: volumes.some((volume) => volume.cells > 1) ? 'stiff' : 'auto',
     onPoint: (t, _y, f, step) => {
-      for (const recorder of recorders) recorder.at(t)
-      const slopes = recorders.map((recorder) => recorder.slopes(f))
-      recorders.forEach((recorder, i) => recorder.within(step, slopes[i]))
+      const moments = recorders.map((recorder) => recorder.look(f))
+      recorders.forEach((recorder, i) => recorder.add(t, moments[i], step))
     },
   })
   const stoppedBy = whatStopped(plan, outcome, outcome.event >= 0 ? watches[outcome.event].name : null, recorders[0])
@@ -62,10 +61,7 @@ export function simulate(plan: Plan): Run[] {
 
 function whatStopped(plan: Plan, outcome: Outcome, event: NamedWatch['name'] | null, recorder: Recorder): StoppedBy {
   const { stops } = plan
-  const at = () => {
-    const { p_Pa, T_K } = recorder.trace
-    return `${bar(p_Pa[p_Pa.length - 1])}, ${celsius(T_K[T_K.length - 1])}`
-  }
+  const at = () => `${bar(recorder.end.p_Pa)}, ${celsius(recorder.end.T_K)}`
   const after = plan.timeless ? '' : ` after ${duration(outcome.t)}`
   switch (outcome.status) {
     case 'event':
@@ -87,8 +83,8 @@ function whatStopped(plan: Plan, outcome: Outcome, event: NamedWatch['name'] | n
 }
 
 /** A stop at the very pressure of what it is joined to. */
-function reachedAsNearAsCan({ until_p_Pa = NaN }: Stops, { trace: { p_Pa } }: Recorder) {
-  return Math.abs(p_Pa[p_Pa.length - 1] / until_p_Pa - 1) <= 2 * EQUAL
+function reachedAsNearAsCan({ until_p_Pa = NaN }: Stops, { end }: Recorder) {
+  return Math.abs(end.p_Pa / until_p_Pa - 1) <= 2 * EQUAL
 }
 
 function wished(stops: Stops): string | null {
