@@ -6,6 +6,8 @@ export { written } from './names'
 export { compile, type Expectation } from './compile'
 export { commonType, fits, typeWords } from './typing'
 export { children, type Ast, type FormulaProblem } from './ast'
+export { analyse, callAt, complete, signature, type CallAt, type Completion, type Completions } from './editor'
+export { highlightedParser } from './highlight'
 export { STANDARD_FUNCTIONS, STANDARD_WORDS } from './standard'
 export { STARTS_FROM_NONE, isFault, isThing } from './values'
 export type {

@@ -1,9 +1,11 @@
 import type { ProblemCode, Span } from '@/lib/errors'
 import type { Fault, Thing, Value } from './types'
 
-export const isFault = (value: Value): value is Fault => typeof value === 'object' && value !== null && 'fault' in value
+export const isFault = (value: Value | undefined): value is Fault =>
+  typeof value === 'object' && value !== null && 'fault' in value
 
-export const isThing = (value: Value): value is Thing => typeof value === 'object' && value !== null && 'thing' in value
+export const isThing = (value: Value | undefined): value is Thing =>
+  typeof value === 'object' && value !== null && 'thing' in value
 
 export const isList = (value: Value): value is readonly Value[] => Array.isArray(value)
 

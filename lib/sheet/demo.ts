@@ -22,10 +22,75 @@ const ACCUMULATOR_FILL: SheetFile = {
       },
     },
     { name: 'Header H', make: 'header', arguments: { gas: 'nitrogen', p: '300 bar', T: '15 °C' } },
+    {
+      name: 'Bank B',
+      make: 'bank',
+      arguments: { gas: 'nitrogen', count: '12', volume: '80 L', p: '280 bar', T: '18 °C' },
+    },
+    { name: 'Needle N', make: 'valve', arguments: { kv: '0.035 [m^3/h]', xt: '0.72' } },
+    { name: 'Orifice O', make: 'orifice', arguments: { diameter: '2.5 mm', cd: '0.84' } },
     { name: 'Still air', make: 'surroundings', arguments: { T: '18 °C', p: '1.013 bar' } },
   ],
-  columns: [{ symbol: 'step', label: 'Step', quantity: 'text' }],
-  rows: [],
+  columns: [
+    { symbol: 'step', label: 'Step', quantity: 'text', width: 72 },
+    { symbol: 's', label: 'Supply', quantity: 'supply', width: 90 },
+    { symbol: 'via', label: 'Path', quantity: 'path', width: 90 },
+    { symbol: 'p_to', label: 'To pressure', quantity: 'pressure', unit: 'bar', decimals: 1 },
+    { symbol: 'T_to', label: 'To temperature', quantity: 'temperature', unit: '°C', decimals: 1 },
+    {
+      symbol: 'run',
+      label: 'Run',
+      quantity: 'run',
+      width: 190,
+      formula:
+        'if(step = "start", start(A1, N2, p: p_to, T: T_to), ' +
+        'if(step = "charge", charge(from: run@from, supply: s, through: via, until_p: p_to), ' +
+        'if(step = "hold", hold(from: run@from, to_T: T_to), ' +
+        'vent(from: run@from, through: via, until_p: p_to))))',
+    },
+    {
+      symbol: 'p',
+      label: 'Pressure',
+      quantity: 'pressure',
+      unit: 'bar',
+      decimals: 1,
+      formula: 'run.p',
+      high: 'A1.p_high',
+    },
+    { symbol: 'T_end', label: 'Gas temp.', quantity: 'temperature', unit: '°C', decimals: 1, formula: 'run.T' },
+    { symbol: 'T_peak', label: 'Peak gas', quantity: 'temperature', unit: '°C', decimals: 1, formula: 'run.T_peak' },
+    { symbol: 'T_low', label: 'Lowest gas', quantity: 'temperature', unit: '°C', decimals: 1, formula: 'run.T_low' },
+    {
+      symbol: 'shell',
+      label: 'Peak shell',
+      quantity: 'temperature',
+      unit: '°C',
+      decimals: 1,
+      formula: 'run.shell_peak',
+      high: 'A1.shell_high',
+      low: 'A1.shell_low',
+    },
+    { symbol: 'm', label: 'Mass', quantity: 'mass', unit: 'kg', decimals: 3, formula: 'run.m' },
+    { symbol: 't', label: 'Time', quantity: 'time', unit: 'min', decimals: 1, formula: 'run.time' },
+    {
+      symbol: 'check',
+      label: 'Margin',
+      quantity: 'temperature_difference',
+      unit: 'K',
+      decimals: 1,
+      display: 'margin',
+      formula: 'A1.shell_high - run.shell_peak',
+      high: 'A1.shell_high - A1.ambient',
+    },
+  ],
+  rows: [
+    { label: 'A1 as received', cells: { step: '"start"', p_to: '5 bar', T_to: '18 °C' } },
+    { label: 'Fill slow', from: 1, cells: { step: '"charge"', s: '[Header H]', via: '[Needle N]', p_to: '200 bar' } },
+    { label: 'Fill quick', from: 1, cells: { step: '"charge"', s: '[Header H]', via: '[Orifice O]', p_to: '200 bar' } },
+    { label: 'Stand to 18 °C', from: 3, cells: { step: '"hold"', T_to: '18 °C' } },
+    { label: 'Top up', from: 4, cells: { step: '"charge"', s: '[Bank B]', via: '[Needle N]', p_to: '200 bar' } },
+    { label: 'Let down', from: 4, cells: { step: '"vent"', via: '[Orifice O]', p_to: '1.1 bar' } },
+  ],
 }
 
 /** The demo sheet as an update to an empty document. */

@@ -1,5 +1,5 @@
 import { bind, parse, show } from '@/lib/formula'
-import type { Scope } from '@/lib/formula'
+import type { Ast, Scope } from '@/lib/formula'
 import { readQuantity } from '@/lib/units'
 import type { ColumnDefinition } from './doc/definition'
 import { COLUMN_KINDS } from './types'
@@ -31,16 +31,18 @@ export function typedFromStored(stored: string, column: ColumnDefinition, scope:
   const shown = show(stored, scope)
   const { ast } = parse(shown)
   if (ast?.type === 'text') return ast.value
-  const plain = ast !== null && (ast.type === 'quantity' || ast.type === 'name')
+  const plain = ast !== null && isPlain(ast)
   return plain && column.quantity !== 'text' ? shown : `=${shown}`
 }
 
 /** Whether a cell holds a value that was typed, rather than working. */
 export function isTypedValue(stored: string): boolean {
   const { ast } = parse(stored)
-  return (
-    ast !== null && (ast.type === 'text' || ast.type === 'quantity' || ast.type === 'name' || ast.type === 'logical')
-  )
+  return ast !== null && (ast.type === 'text' || isPlain(ast))
 }
+
+/** A number, a quantity, or the name of a thing: what a person types as a value. */
+const isPlain = (ast: Ast) =>
+  ast.type === 'number' || ast.type === 'quantity' || (ast.type === 'reference' && ast.row === null)
 
 const textLiteral = (text: string) => `"${text.replaceAll('"', '""')}"`

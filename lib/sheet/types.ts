@@ -1,5 +1,5 @@
 import type { Type } from '@/lib/formula'
-import { quantity } from '@/lib/units'
+import { isQuantity, quantity } from '@/lib/units'
 import type { RigSection } from './doc/definition'
 
 /** Kinds a column can have that are no quantity, with the words people see. */

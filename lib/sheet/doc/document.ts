@@ -1,4 +1,4 @@
-import * as Y from 'yjs'
+import type * as Y from 'yjs'
 
 /** The shape of the shared document, version 1. Bump it when a reader of the old shape would misread the new one. */
 export const SHEET_FORMAT = 1

@@ -1,5 +1,6 @@
 import { sha256 } from '@noble/hashes/sha2.js'
 import { bytesToHex, utf8ToBytes } from '@noble/hashes/utils.js'
+import { isThing } from '@/lib/formula'
 import type { Thing, ThingKind, Value } from '@/lib/formula'
 
 /**
@@ -10,12 +11,20 @@ export function contentKey(name: string, args: Readonly<Record<string, Value | u
   return bytesToHex(sha256(utf8ToBytes(`${name}(${canonical(args)})`))).slice(0, 32)
 }
 
-export function thing(kind: ThingKind, key: string, shown: string, value: unknown): Thing {
-  return { thing: kind, key, shown, value }
+const things = new WeakMap<object, Thing>()
+
+export function thing(kind: ThingKind, key: string, shown: string, value: object): Thing {
+  const made = { thing: kind, key, shown, value }
+  things.set(value, made)
+  return made
 }
 
-export const isThing = (value: Value | undefined): value is Thing =>
-  typeof value === 'object' && value !== null && 'thing' in value
+/** The thing that a value was made as: a run's vessel is the very vessel that it was started with. */
+export function thingOf(value: object): Thing {
+  const known = things.get(value)
+  if (!known) throw new Error('this value was never made a thing')
+  return known
+}
 
 function canonical(args: Readonly<Record<string, Value | undefined>>): string {
   return Object.keys(args)

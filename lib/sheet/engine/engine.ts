@@ -1,18 +1,19 @@
 import { DetailedCellError } from 'hyperformula'
 import type { ExportedChange, HyperFormula } from 'hyperformula'
-import type { Read, Scope, Surroundings, Type, Value, Vocabulary } from '@/lib/formula'
+import { isFault, isThing } from '@/lib/formula'
+import type { Read, Surroundings, Type, Value, Vocabulary } from '@/lib/formula'
 import { cellKey } from '../doc/definition'
 import type { ColumnDefinition, RowDefinition, SheetDefinition } from '../doc/definition'
 import { scopeOf } from '../scope'
 import { columnType, columnWords, sectionType } from '../types'
 import type { CellValue, Limits, ValueChanges } from '../values'
-import { isThing } from './content'
 import { cycleReason } from './cycle'
 import { Formulas } from './formulas'
 import type { NumberedFormula, Wanted } from './formulas'
 import { createGraph } from './graph'
-import type { GraphScalar, GraphSheet, GraphValue } from './graph'
+import type { GraphSheet } from './graph'
 import { Interned, NO_START, graphFault } from './intern'
+import type { GraphScalar, GraphValue } from './intern'
 import { Places, letters } from './layout'
 import { constructorCall, surroundingsOf } from './rig'
 
@@ -230,7 +231,7 @@ export class SheetEngine {
     const held = this.interned.fromMark(String(value))
     if (typeof held === 'string') return { kind: 'text', text: held }
     if (isThing(held)) return { kind: 'thing', thing: held.thing, key: held.key, shown: held.shown }
-    if (held !== null && typeof held === 'object' && 'fault' in held) {
+    if (isFault(held)) {
       return { kind: 'error', code: held.fault, reason: held.reason, ...(held.span && { span: held.span }) }
     }
     throw new Error(`the graph holds an unknown mark: ${String(value)}`)

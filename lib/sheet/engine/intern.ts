@@ -1,4 +1,5 @@
 import { CellError, EmptyValue, ErrorType, SimpleRangeValue } from 'hyperformula'
+import { STARTS_FROM_NONE } from '@/lib/formula'
 import type { Fault, Value } from '@/lib/formula'
 
 /** What a cell of the dependency graph can hold, and what an argument that names cells can be. */
@@ -7,14 +8,13 @@ export type GraphValue = GraphScalar | SimpleRangeValue
 
 /** Stands in the graph where a formula reads the state that a row starts from, and the row starts from none. */
 export const NO_START = '@none'
-const startsFromNone: Fault = { fault: 'state', reason: 'this state starts from none' }
 
 /**
  * The graph's cells hold numbers, logicals and text; ours also hold things and faults. Those stand in the graph as a
  * text mark that leads to the value here. Equal values get equal marks, so that the graph stops where nothing changed.
  */
 export class Interned {
-  private readonly values = new Map<string, Value>([[NO_START, startsFromNone]])
+  private readonly values = new Map<string, Value>([[NO_START, STARTS_FROM_NONE]])
 
   toGraph(value: Value): GraphScalar {
     if (typeof value === 'number' || typeof value === 'boolean') return value
@@ -27,7 +27,7 @@ export class Interned {
   fromGraph(value: GraphValue): Value {
     if (typeof value === 'number' || typeof value === 'boolean') return value
     if (typeof value === 'string') return this.fromMark(value)
-    if (value instanceof SimpleRangeValue) return value.data.flat().map((item) => this.fromGraph(item))
+    if (value instanceof SimpleRangeValue) return value.data.flat().map((item) => this.fromGraph(item as GraphScalar))
     if (value instanceof CellError) return graphFault(value.type)
     return null
   }

@@ -1,8 +1,7 @@
-import { compile } from '@/lib/formula'
+import { compile, isThing } from '@/lib/formula'
 import type { Scope, Surroundings, Vocabulary } from '@/lib/formula'
 import type { ThingDefinition } from '../doc/definition'
 import { thingType } from '../types'
-import { isThing } from './content'
 import { STANDARD_SURROUNDINGS } from './surroundings'
 
 export const EMPTY_SCOPE: Scope = { columns: [], rows: [], things: [] }
@@ -19,5 +18,5 @@ export function surroundingsOf(rig: readonly ThingDefinition[], vocabulary: Voca
   if (!thing) return STANDARD_SURROUNDINGS
   const compilation = compile(constructorCall(thing), EMPTY_SCOPE, vocabulary, { expected: thingType('surroundings') })
   const value = compilation.ok ? compilation.run([], STANDARD_SURROUNDINGS) : null
-  return value !== null && isThing(value) ? (value.value as Surroundings) : STANDARD_SURROUNDINGS
+  return isThing(value) ? (value.value as Surroundings) : STANDARD_SURROUNDINGS
 }

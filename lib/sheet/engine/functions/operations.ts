@@ -1,0 +1,182 @@
+import { LRUCache } from 'lru-cache'
+import { Problem } from '@/lib/errors'
+import type { Arguments, FunctionSpec, Parameter, Surroundings, Thing, Value } from '@/lib/formula'
+import { charge, hold, start, vent } from '@/lib/vessel'
+import type { Draw, Heat, Path, Run, Stops, Supply } from '@/lib/vessel'
+import { TEXT, thingType } from '../../types'
+import { contentKey, thing } from '../content'
+import { GAS, fluidOf, numberParameter, optionalNumber, optionalValue, thingParameter, valueOf } from './arguments'
+import { shown } from './shown'
+import { STATE_PARAMETERS, needsPair, pairOf } from './state-pair'
+import type { RigVessel } from './vessels'
+
+/** Runs by content: one serves every cell that asks for the same. A run with its trace is some tens of kilobytes. */
+const runs = new LRUCache<string, Thing>({ max: 5_000 })
+
+const optional = { optional: true }
+const FROM = thingParameter('from', 'run', 'the run it starts from: run@from')
+const THROUGH = thingParameter(
+  'through',
+  'path',
+  'what the gas flows through; left out: the balance alone, with no time in it',
+  optional,
+)
+
+const STOPS: readonly Parameter[] = [
+  numberParameter('until_p', 'pressure', 'stop at this pressure', optional),
+  numberParameter('until_T', 'temperature', 'stop at this gas temperature', optional),
+  numberParameter('until_m', 'mass', 'stop at this mass of gas', optional),
+  numberParameter('for', 'time', 'stop after this time', optional),
+]
+
+function stopsOf(args: Arguments): Stops {
+  return {
+    until_p_Pa: optionalNumber(args, 'until_p'),
+    until_T_K: optionalNumber(args, 'until_T'),
+    until_m_kg: optionalNumber(args, 'until_m'),
+    for_s: optionalNumber(args, 'for'),
+  }
+}
+
+type Operation = Omit<FunctionSpec, 'group' | 'result' | 'evaluate'> & {
+  readonly run: (args: Arguments, surroundings: Surroundings) => Run
+}
+
+function operation({ run, ...spec }: Operation): FunctionSpec {
+  return {
+    ...spec,
+    group: 'Operations',
+    result: thingType('run'),
+    evaluate: (args, surroundings): Value => {
+      const key = contentKey(spec.name, { ...args, around_T: surroundings.T_K, around_p: surroundings.p_Pa })
+      let made = runs.get(key)
+      if (!made) {
+        const result = run(args, surroundings)
+        made = thing('run', key, runWords(result), result)
+        if (result.supply)
+          thing('supply', contentKey('left in the supply', { run: made }), 'what is left in the supply', result.supply)
+        runs.set(key, made)
+      }
+      return made
+    },
+  }
+}
+
+export function runWords(run: Run): string {
+  const state = `${shown(run.p_Pa, 'pressure', 'bar')}, ${shown(run.T_K, 'temperature', '°C')}`
+  return run.time_s === null || run.time_s === 0 ? state : `${state} in ${shown(run.time_s, 'time', 's')}`
+}
+
+export const operationFunctions: readonly FunctionSpec[] = [
+  operation({
+    name: 'start',
+    parameters: [
+      thingParameter('vessel', 'vessel', 'the vessel', { named: false }),
+      { ...GAS, optional: true, help: 'the gas in it; left out: the one the vessel is for' },
+      ...STATE_PARAMETERS,
+      numberParameter('shell_T', 'temperature', 'temperature of the shell, where it is not that of the gas', optional),
+    ],
+    help: 'a vessel as received; p: 0 bar is an evacuated one',
+    example: { formula: 'start(vessel(50 L), nitrogen, p: 5 bar, T: 18 °C).m', shown: '0.2894 kg' },
+    run: (args, surroundings) => {
+      const vessel = valueOf<RigVessel>(args, 'vessel')
+      const fluid = args.gas === undefined ? vessel.gas : fluidOf(args)
+      if (!fluid) throw new Problem('argument', 'start needs a gas: the vessel names none')
+      const shellT_K = optionalNumber(args, 'shell_T')
+      if (args.p === 0)
+        return start(vessel, fluid, 'evacuated', optionalNumber(args, 'T') ?? shellT_K ?? surroundings.T_K)
+      needsPair(Object.keys(args).filter((name) => args[name] !== undefined))
+      const [pair, a, b] = pairOf(args)
+      return start(vessel, fluid, { pair, a, b }, shellT_K)
+    },
+  }),
+  operation({
+    name: 'charge',
+    parameters: [
+      FROM,
+      thingParameter('supply', 'supply', 'what it is charged from'),
+      THROUGH,
+      ...STOPS,
+      {
+        name: 'heat',
+        type: TEXT,
+        optional: true,
+        named: true,
+        help: 'without a path: "none" (as standard) or "shell" for a shell that comes to the gas’s temperature',
+      },
+    ],
+    help: 'gas flows in from a supply until a stop is reached',
+    example: {
+      formula:
+        'charge(from: start(vessel(50 L), nitrogen, p: 5 bar, T: 18 °C), supply: header(nitrogen, p: 300 bar, T: 15 °C), until_p: 200 bar).T',
+      shown: '',
+    },
+    run: (args) =>
+      charge({
+        from: valueOf<Run>(args, 'from'),
+        supply: valueOf<Supply>(args, 'supply'),
+        through: optionalValue<Path>(args, 'through'),
+        stops: stopsOf(args),
+        ...(args.heat !== undefined && { heat: heatOf(args) }),
+      }),
+  }),
+  operation({
+    name: 'vent',
+    parameters: [
+      FROM,
+      THROUGH,
+      ...STOPS,
+      numberParameter('back', 'pressure', 'the pressure it goes to; left out: that of the surroundings', optional),
+      {
+        name: 'draw',
+        type: TEXT,
+        optional: true,
+        named: true,
+        default: '"mixed"',
+        help: 'of two phases: mixed, vapour or liquid',
+      },
+    ],
+    help: 'gas flows out until a stop is reached',
+    example: {
+      formula: 'vent(from: start(vessel(50 L), nitrogen, p: 200 bar, T: 18 °C), until_p: 20 bar).T',
+      shown: '',
+    },
+    run: (args, surroundings) =>
+      vent({
+        from: valueOf<Run>(args, 'from'),
+        through: optionalValue<Path>(args, 'through'),
+        back_Pa: optionalNumber(args, 'back') ?? surroundings.p_Pa,
+        draw: drawOf(args),
+        stops: stopsOf(args),
+      }),
+  }),
+  operation({
+    name: 'hold',
+    parameters: [
+      FROM,
+      numberParameter('to_T', 'temperature', 'everything comes to this temperature, however long that takes', optional),
+      ...STOPS.filter((stop) => stop.name !== 'until_m'),
+    ],
+    help: 'closed, while heat passes between gas, shell and surroundings',
+    example: { formula: 'hold(from: start(vessel(50 L), nitrogen, p: 200 bar, T: 80 °C), to_T: 18 °C).p', shown: '' },
+    run: (args) =>
+      hold({ from: valueOf<Run>(args, 'from'), to_T_K: optionalNumber(args, 'to_T'), stops: stopsOf(args) }),
+  }),
+]
+
+const HEATS: Readonly<Record<string, Heat>> = { none: 'adiabatic', shell: 'shell_at_gas_temperature' }
+
+function heatOf(args: Arguments): Heat {
+  const heat = HEATS[String(args.heat)]
+  if (!heat)
+    throw new Problem('argument', `heat is one of ${Object.keys(HEATS).join(', ')}, not “${String(args.heat)}”`)
+  return heat
+}
+
+const DRAWS: readonly Draw[] = ['mixed', 'vapour', 'liquid']
+
+function drawOf(args: Arguments): Draw {
+  const draw = DRAWS.find((word) => word === args.draw)
+  if (!draw) throw new Problem('argument', `draw is one of ${DRAWS.join(', ')}, not “${String(args.draw)}”`)
+  return draw
+}
