@@ -7,7 +7,7 @@ import type { Database, OpenDatabase } from './database'
 const KEY = Symbol.for('chargehand.database')
 const shared = globalThis as { [KEY]?: OpenDatabase }
 
-export function useDatabase(open: OpenDatabase | undefined): void {
+export function setDatabase(open: OpenDatabase | undefined): void {
   shared[KEY] = open
 }
 

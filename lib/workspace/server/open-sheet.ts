@@ -10,7 +10,7 @@ export const openSheet = operation({
   target: (db, input) => findSheet(db, input.sheetId),
   run: async ({ actor, target: sheet }) => ({
     sheet,
-    role: actor.roles.get(sheet.workspaceId)!,
+    me: { id: actor.id, name: actor.name, role: actor.roles.get(sheet.workspaceId)! },
     can: {
       edit: can(actor, 'sheet.edit', sheet),
       freeze: can(actor, 'snapshot.freeze', sheet),

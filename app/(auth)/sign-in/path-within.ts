@@ -1,0 +1,7 @@
+/** A path of this site to go on to, from what an address asks for: never to another site. */
+export function pathWithin(asked: string | string[] | undefined): string {
+  const base = 'http://site.invalid'
+  if (typeof asked !== 'string' || !URL.canParse(asked, base)) return '/'
+  const url = new URL(asked, base)
+  return url.origin === base ? `${url.pathname}${url.search}${url.hash}` : '/'
+}
