@@ -37,7 +37,8 @@ export function print(ast: Ast): string {
     case 'percent':
       return `${operand(ast.of, 7)} %`
     case 'negative':
-      return `-${operand(ast.of, PREFIX + 2)}`
+      // a sign right before a number is part of its reading
+      return isNumeral(ast.of) ? `-(${print(ast.of)})` : `-${operand(ast.of, PREFIX + 2)}`
     case 'binary': {
       const binding = BINDING[ast.operator]
       const rightward = ast.operator === '^'
@@ -45,6 +46,8 @@ export function print(ast: Ast): string {
     }
   }
 }
+
+const isNumeral = (ast: Ast) => ast.type === 'number' || ast.type === 'quantity'
 
 function operand(ast: Ast, needed: number): string {
   return bindingOf(ast) < needed ? `(${print(ast)})` : print(ast)
