@@ -26,7 +26,7 @@ export function film(inside: Inside, fluid: Fluid): Film {
 
 /** Rayleigh number of a difference of 1 K over a length of 1 m, from the bulk state: g β ρ² cp / (μ λ). */
 function unitRayleigh(gas: State, viscosity: number, conductivity: number) {
-  const expansion = gas.dpdT / (gas.rho_kg_m3 * gas.dpdrho)
+  const expansion = gas.dpdT_rho_Pa_K / (gas.rho_kg_m3 * gas.dpdrho_T_Pa_m3_kg)
   return (G * expansion * gas.rho_kg_m3 ** 2 * gas.cp_J_kgK) / (viscosity * conductivity)
 }
 

@@ -6,14 +6,10 @@ import type { State } from '@/lib/fluids'
  */
 
 /** (∂u/∂ρ) at constant T, J m³/kg². */
-export const energyByDensity = (s: State) => (s.p_Pa - s.T_K * s.dpdT) / (s.rho_kg_m3 * s.rho_kg_m3)
+export const energyByDensity = (s: State) => (s.p_Pa - s.T_K * s.dpdT_rho_Pa_K) / (s.rho_kg_m3 * s.rho_kg_m3)
 
 /** (∂p/∂u) at constant ρ, Pa kg/J. */
-export const pressureByEnergy = (s: State) => s.dpdT / s.cv_J_kgK
+export const pressureByEnergy = (s: State) => s.dpdT_rho_Pa_K / s.cv_J_kgK
 
 /** (∂p/∂ρ) at constant u, Pa m³/kg. */
-export const pressureByDensity = (s: State) => s.dpdrho - pressureByEnergy(s) * energyByDensity(s)
-
-/** Square of the speed of sound, of a mixture of two phases in equilibrium too, m²/s². */
-export const soundSpeedSquared = (s: State) =>
-  s.dpdrho + (s.T_K * s.dpdT * s.dpdT) / (s.rho_kg_m3 * s.rho_kg_m3 * s.cv_J_kgK)
+export const pressureByDensity = (s: State) => s.dpdrho_T_Pa_m3_kg - pressureByEnergy(s) * energyByDensity(s)

@@ -190,7 +190,9 @@ export class ControlVolume {
 
   /** dp/dt when mass and energy of what the volume holds change at these rates. */
   pressureRate(dm: number, dE: number): number {
-    return this.gas.dpdT * this.temperatureRate(dm, dE) + (this.gas.dpdrho * dm) / this.vessel.volume_m3
+    return (
+      this.gas.dpdT_rho_Pa_K * this.temperatureRate(dm, dE) + (this.gas.dpdrho_T_Pa_m3_kg * dm) / this.vessel.volume_m3
+    )
   }
 
   private isothermalHeat(dm: number, dE: number): number {

@@ -1,8 +1,10 @@
 import { Problem } from '@/lib/errors'
 import type { Fluid, State } from '@/lib/fluids'
-import { soundSpeedSquared } from '../network/derivatives'
 
 const MAX_FAST = 14
+/** Near enough to the throat that what is left enters the flux to third order (to second order, off the isentrope). */
+const NEAR_SONIC = 2e-4
+const NEAR_ISENTROPE = 3e-5
 const MAX_BISECTIONS = 60
 /** Nearer to equal pressures than this, differences of enthalpy lose too many digits. */
 const NEARLY_EQUAL = 1e-4
@@ -117,25 +119,29 @@ export class IsentropicFlux {
         lastStep = 0
         continue
       }
-      const h = t.h_J_kg + (t.cv_J_kgK + t.dpdT / rho) * dT
+      if ((globalThis as any).DBG) console.log(count, rho, T, ds, dT)
+      const h = t.h_J_kg + (t.cv_J_kgK + t.dpdT_rho_Pa_K / rho) * dT
       const speedSquared = 2 * (up.h_J_kg - h)
-      const sound2 = soundSpeedSquared(t)
+      // On the isentrope, dT away; as for a perfect gas the square of the speed of sound goes with temperature.
+      const sound2 = soundSpeedSquared(t) * (1 + dT / T)
       const F = sound2 - speedSquared
       if (lastStep !== 0) {
         const slope = (F - lastF) / (2 * sound2 * lastStep)
         if (slope > 0.3 && slope < 6) this.gamma = slope
       }
-      if (Math.abs(F) < 2e-6 * sound2 && Math.abs(dT) < 1e-6 * T) {
+      if (Math.abs(F) < NEAR_SONIC * sound2 && Math.abs(dT) < NEAR_ISENTROPE * T) {
         this.logRho = Math.log(rho / up.rho_kg_m3)
-        this.logT = Math.log(T / up.T_K)
-        this.chokedG = rho * Math.sqrt(speedSquared)
-        this.chokedP_Pa = t.p_Pa + t.dpdT * dT
+        this.logT = Math.log((T + dT) / up.T_K)
+        // The flux at its top, seen from a density that is off by `off`: d ln G / d ln ρ = 2 Γ off.
+        const off = F / (2 * this.gamma * sound2)
+        this.chokedG = rho * Math.sqrt(speedSquared) * (1 + this.gamma * off * off)
+        this.chokedP_Pa = t.p_Pa + t.dpdT_rho_Pa_K * dT
         return true
       }
       const step = Math.max(-0.3, Math.min(0.3, -F / (2 * this.gamma * sound2)))
       lastStep = Math.abs(step) > 1e-7 ? step : 0
       lastF = F
-      T = (T + dT) * Math.exp((t.dpdT / (rho * t.cv_J_kgK)) * step)
+      T = (T + dT) * Math.exp((t.dpdT_rho_Pa_K / (rho * t.cv_J_kgK)) * step)
       rho *= Math.exp(step)
       if (rho > up.rho_kg_m3) rho = up.rho_kg_m3
     }
@@ -179,6 +185,9 @@ export class IsentropicFlux {
     return !beyond
   }
 }
+
+/** Of a mixture of two phases too, in equilibrium. */
+const soundSpeedSquared = (s: State) => s.w_m_s * s.w_m_s
 
 /** -(∂ ln p/∂ ln v) at constant entropy. */
 const isentropicExponent = (s: State) => (s.rho_kg_m3 * soundSpeedSquared(s)) / s.p_Pa
