@@ -1,6 +1,6 @@
 import type { Scope } from '@/lib/formula'
 import { formatNumber, formatQuantity } from '@/lib/units'
-import { isTypedValue, typedFromStored } from './entry'
+import { isTypedValue, nameOf, typedFromStored } from './entry'
 import { COLUMN_KINDS } from './types'
 import type { CellView, ColumnView } from './view'
 import type { CellValue, LimitMark, Limits } from './values'
@@ -88,7 +88,7 @@ export class Cell implements CellView {
   }
 }
 
-function shownValue({ value, column, ambient_Pa }: CellParts): string {
+function shownValue({ stored, scope, value, column, ambient_Pa }: CellParts): string {
   switch (value.kind) {
     case 'empty':
       return ''
@@ -104,7 +104,7 @@ function shownValue({ value, column, ambient_Pa }: CellParts): string {
     case 'logical':
       return value.value ? 'yes' : 'no'
     case 'thing':
-      return value.shown
+      return nameOf(stored, scope) ?? value.shown
     case 'error':
       return value.reason
   }

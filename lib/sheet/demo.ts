@@ -45,7 +45,7 @@ const ACCUMULATOR_FILL: SheetFile = {
       formula:
         'if(step = "start", start(A1, N2, p: p_to, T: T_to), ' +
         'if(step = "charge", charge(from: run@from, supply: s, through: via, until_p: p_to), ' +
-        'if(step = "hold", hold(from: run@from, to_T: T_to), ' +
+        'if(step = "hold", hold(from: run@from, until_T: T_to), ' +
         'vent(from: run@from, through: via, until_p: p_to))))',
     },
     {
@@ -58,7 +58,15 @@ const ACCUMULATOR_FILL: SheetFile = {
       high: 'A1.p_high',
     },
     { symbol: 'T_end', label: 'Gas temp.', quantity: 'temperature', unit: '°C', decimals: 1, formula: 'run.T' },
-    { symbol: 'T_peak', label: 'Peak gas', quantity: 'temperature', unit: '°C', decimals: 1, formula: 'run.T_peak' },
+    {
+      symbol: 'T_peak',
+      label: 'Peak gas',
+      quantity: 'temperature',
+      unit: '°C',
+      decimals: 1,
+      formula: 'run.T_peak',
+      high: 'A1.shell_high',
+    },
     { symbol: 'T_low', label: 'Lowest gas', quantity: 'temperature', unit: '°C', decimals: 1, formula: 'run.T_low' },
     {
       symbol: 'shell',
@@ -79,7 +87,7 @@ const ACCUMULATOR_FILL: SheetFile = {
       unit: 'K',
       decimals: 1,
       display: 'margin',
-      formula: 'A1.shell_high - run.shell_peak',
+      formula: 'A1.shell_high - run.T_peak',
       high: 'A1.shell_high - A1.ambient',
     },
   ],
@@ -87,7 +95,7 @@ const ACCUMULATOR_FILL: SheetFile = {
     { label: 'A1 as received', cells: { step: '"start"', p_to: '5 bar', T_to: '18 °C' } },
     { label: 'Fill slow', from: 1, cells: { step: '"charge"', s: '[Header H]', via: '[Needle N]', p_to: '200 bar' } },
     { label: 'Fill quick', from: 1, cells: { step: '"charge"', s: '[Header H]', via: '[Orifice O]', p_to: '200 bar' } },
-    { label: 'Stand to 18 °C', from: 3, cells: { step: '"hold"', T_to: '18 °C' } },
+    { label: 'Stand to 20 °C', from: 3, cells: { step: '"hold"', T_to: '20 °C' } },
     { label: 'Top up', from: 4, cells: { step: '"charge"', s: '[Bank B]', via: '[Needle N]', p_to: '200 bar' } },
     { label: 'Let down', from: 4, cells: { step: '"vent"', via: '[Orifice O]', p_to: '1.1 bar' } },
   ],

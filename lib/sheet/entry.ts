@@ -1,4 +1,4 @@
-import { bind, parse, show } from '@/lib/formula'
+import { bind, parse, show, written } from '@/lib/formula'
 import type { Ast, Scope } from '@/lib/formula'
 import { readQuantity } from '@/lib/units'
 import type { ColumnDefinition } from './doc/definition'
@@ -23,7 +23,9 @@ export function storedFromTyped(typed: string, column: ColumnDefinition, scope: 
     const reading = readQuantity(text, { quantity, unit, ambient_Pa })
     if (reading.ok) return reading.formula
   }
-  return bind(text, scope)
+  // in a column of things a name is typed as it is, spaces and all
+  const named = scope.things.some((thing) => thing.name === text)
+  return bind(named ? written(text) : text, scope)
 }
 
 /** What editing a cell starts with: the value as it was typed, or the formula behind `=`, in people's names. */
@@ -31,6 +33,8 @@ export function typedFromStored(stored: string, column: ColumnDefinition, scope:
   const shown = show(stored, scope)
   const { ast } = parse(shown)
   if (ast?.type === 'text') return ast.value
+  const name = nameOf(stored, scope)
+  if (name !== null && column.quantity in COLUMN_KINDS) return name
   const plain = ast !== null && isPlain(ast)
   return plain && column.quantity !== 'text' ? shown : `=${shown}`
 }
@@ -39,6 +43,12 @@ export function typedFromStored(stored: string, column: ColumnDefinition, scope:
 export function isTypedValue(stored: string): boolean {
   const { ast } = parse(stored)
   return ast !== null && (ast.type === 'text' || isPlain(ast))
+}
+
+/** The name that stands alone in a cell, without its brackets; null where there is more, or something else. */
+export function nameOf(stored: string | null, scope: Scope): string | null {
+  const { ast } = parse(stored === null ? '' : show(stored, scope))
+  return ast?.type === 'reference' && ast.row === null && ast.target.by === 'name' ? ast.target.name : null
 }
 
 /** A number, a quantity, or the name of a thing: what a person types as a value. */

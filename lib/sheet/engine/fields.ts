@@ -65,7 +65,9 @@ const RUN_FIELDS: readonly FieldSpec[] = [
   number<Run>('flow_peak', 'mass_flow', 'greatest flow', (run) => run.flow_peak_kg_s),
   number<Run>('moved', 'mass', 'mass that came in; negative where it went out', (run) => run.moved_kg),
   number<Run>('heat', 'energy', 'heat that the gas took up from its shell', (run) => run.heat_J),
-  number<Run>('time', 'time', 'time it takes: this run is a balance with no time in it', (run) => run.time_s),
+  field<Run>('time', quantityType('time'), 'time it takes', (run) =>
+    present(run.time_s, 'this run is a balance alone: it has no time in it'),
+  ),
   field<Run>('stopped_by', TEXT, 'what stopped it', (run) => run.stoppedBy),
   number<Run>('balance', 'dimensionless', 'the larger of the relative residuals of energy and mass', (run) =>
     Math.max(run.balance.energy, run.balance.mass),

@@ -62,9 +62,14 @@ function operation({ run, ...spec }: Operation): FunctionSpec {
   }
 }
 
-export function runWords(run: Run): string {
-  const state = `${shown(run.p_Pa, 'pressure', 'bar')}, ${shown(run.T_K, 'temperature', '°C')}`
-  return run.time_s === null || run.time_s === 0 ? state : `${state} in ${shown(run.time_s, 'time', 's')}`
+function runWords(run: Run): string {
+  const state = `${shown(run.p_Pa, 'pressure', 'bar', 1)}, ${shown(run.T_K, 'temperature', '°C', 1)}`
+  return run.time_s ? `${state} in ${timeWords(run.time_s)}` : state
+}
+
+function timeWords(time_s: number): string {
+  if (time_s < 120) return shown(time_s, 'time', 's', 1)
+  return time_s < 7200 ? shown(time_s, 'time', 'min', 1) : shown(time_s, 'time', 'h', 1)
 }
 
 export const operationFunctions: readonly FunctionSpec[] = [
