@@ -69,6 +69,8 @@ class Integration {
   private readonly valuesAt: Float64Array
   private readonly point: Float64Array
   private readonly pointRates: Float64Array
+  /** How far the system lets the next step go. */
+  private reach = Infinity
   private t = 0
   private stiff: boolean
   private steps = 0
@@ -103,6 +105,7 @@ class Integration {
     while (this.t < until) {
       if (this.steps + this.rejected >= maxSteps) return this.outcome('steps')
       if (!(h > SHORTEST * this.t)) return this.outcome('stuck')
+      h = Math.min(h, this.reach)
       const last = this.t + h >= until * (1 - 1e-12)
       if (last) h = until - this.t
       const error = this.attempt(h)
@@ -146,6 +149,7 @@ class Integration {
     const { system, stepper, values, valuesNew, options } = this
     const from = this.t
     stepper.accept()
+    this.reach = system.longestStep?.() ?? Infinity
     system.eventValues(valuesNew)
     const event = this.firstEvent()
     if (event.index < 0) {
@@ -202,6 +206,7 @@ class Integration {
   private begin() {
     this.system.rates(this.point, this.pointRates)
     this.stepper.reset(this.point, this.pointRates)
+    this.reach = this.system.longestStep?.() ?? Infinity
     this.system.eventValues(this.values)
   }
 

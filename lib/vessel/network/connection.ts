@@ -51,6 +51,8 @@ export class Connection {
   private most_kg_s = 0
   /** Which way it is driven. */
   private sense = 1
+  /** Whether phases are still drawn apart. */
+  private apart = true
   private fromVersion = -1
   private toVersion = -1
 
@@ -92,9 +94,8 @@ export class Connection {
       // The flow of a moment ago is a good beginning for `follow`.
       this.law(forward, this.from, this.to)
     } else if (this.mode === 'driven') {
-      this.flow_kg_s = 0
-      if (drop > 0) this.flow_kg_s = this.law(forward, this.from, this.to)
-      else if (drop < 0 && backward) this.flow_kg_s = -this.law(backward, this.to, this.from)
+      if (drop < 0 && backward) this.flow_kg_s = -this.law(backward, this.to, this.from)
+      else this.flow_kg_s = this.law(forward, this.from, this.to, Math.min(pressureOf(this.from), pressureOf(this.to)))
     } else {
       this.most_kg_s = this.law(forward, this.from, this.to, pressureOf(this.from) * (1 - EQUAL))
     }
@@ -103,10 +104,22 @@ export class Connection {
   }
 
   private law(resistance: Resistance, from: End, to: End, p_down = pressureOf(to)): number {
-    const up = 'volume' in from ? from.volume.rest(this.parts.draw) : from.boundary.rest?.(p_down)
+    const draw = this.apart ? this.parts.draw : 'mixed'
+    const up = 'volume' in from ? from.volume.rest(draw) : from.boundary.rest?.(p_down)
     if (!up) return 0
     this.h_J_kg = up.h_J_kg
     return resistance.flow_kg_s(up, p_down)
+  }
+
+  /**
+   * A step that stays well short of where pressures are equal: a path's law has no slope there, and an explicit step that
+   * reaches for it would be thrown away.
+   */
+  get longestStep_s() {
+    if (this.mode !== 'driven') return Infinity
+    const drop = this.sense * this.drop_Pa
+    const rate = this.sense * (rateOf(this.from) - rateOf(this.to))
+    return drop > 0 && rate < 0 ? (0.55 * drop) / -rate : Infinity
   }
 
   /** Finds the flow asked for, with heat as it stands; returns by how much it changed, relative. */
@@ -157,6 +170,20 @@ export class Connection {
     }
   }
 
+  /** Falls to zero where no liquid is left to be drawn. What condenses later is mist, and goes with the gas. */
+  readonly liquidLeft = (): number => {
+    const { draw, from } = this.parts
+    if (draw !== 'liquid' || !this.apart || !('volume' in from)) return 1
+    const { x, phase } = from.volume.gas
+    if (phase === 'two-phase') return 1 - x
+    return phase === 'gas' ? -1 : 1
+  }
+
+  liquidGone() {
+    this.apart = false
+    this.fromVersion = -1
+  }
+
   changeMode() {
     if (this.mode === 'level')
       this.mode = this.parts.backward || 2 * this.asked_kg_s > this.most_kg_s ? 'driven' : 'shut'
@@ -167,4 +194,5 @@ export class Connection {
 }
 
 const pressureOf = (end: End) => ('volume' in end ? end.volume.p_Pa : end.boundary.p_Pa)
+const rateOf = (end: End) => ('volume' in end ? end.volume.dp_Pa_s : 0)
 const versionOf = (end: End) => ('volume' in end ? end.volume.version : 0)

@@ -120,6 +120,10 @@ export class Network implements OdeSystem {
     this.volumes.forEach((volume, i) => volume.scales(out, this.at[i]))
   }
 
+  longestStep() {
+    return Math.min(Infinity, ...this.connections.map((connection) => connection.longestStep_s))
+  }
+
   eventValues(out: Float64Array) {
     for (let i = 0; i < this.events.length; i++) out[i] = this.events[i].value()
   }

@@ -10,7 +10,7 @@ import { balanceOf } from './balance'
 import { begin } from './begin'
 import { report } from './report'
 import type { Numerics } from './requests'
-import { coldWatch, modeWatch, settledWatch, watchesFor, type NamedWatch } from './watches'
+import { changeWatches, coldWatch, settledWatch, watchesFor, type NamedWatch } from './watches'
 
 const DEFAULT_RTOL = 1e-6
 /** A balance has no time to resolve: it is integrated over the mass that passes, nearly exactly. */
@@ -38,7 +38,7 @@ export function simulate(plan: Plan): Run[] {
   const watches = watchesFor(volumes[0], plan.connections, stops)
   // A run that is to last a given time goes on when nothing changes any more; any other could then never end.
   if (stops.settled || stops.for_s === undefined) watches.push(settledWatch(network))
-  watches.push(coldWatch(volumes), ...plan.connections.map(modeWatch))
+  watches.push(coldWatch(volumes), ...plan.connections.flatMap(changeWatches))
   network.events = watches
   const recorders = volumes.map((_, i) => new Recorder(network, i, plan.from[i].shell.mean_K, !timeless))
   const horizon = timeless ? BALANCE_HORIZON : (plan.horizon_s ?? DEFAULT_HORIZON_s)
@@ -69,7 +69,7 @@ function whatStopped(plan: Plan, outcome: Outcome, event: NamedWatch['name'] | n
         if (reachedAsNearAsCan(stops, recorder)) return 'until_p'
         throw new Problem('impossible', `it settles at ${at()}${after} without reaching ${wished(stops)}`)
       }
-      if (event === null || event === 'mode') throw new Error('a change of mode does not end a run')
+      if (event === null || event === 'change') throw new Error('a change in how gas flows does not end a run')
       return event
     case 'end':
       if (stops.for_s !== undefined) return 'for'

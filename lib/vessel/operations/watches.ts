@@ -4,7 +4,7 @@ import type { ControlVolume } from '../network/volume'
 import type { StoppedBy, Stops } from '../run'
 
 export interface NamedWatch extends Watch {
-  readonly name: StoppedBy | 'mode'
+  readonly name: StoppedBy | 'change'
 }
 
 /** At rest within this, K. */
@@ -33,9 +33,13 @@ export function watchesFor(volume: ControlVolume, connections: readonly Connecti
   return watches
 }
 
-/** Where a flow comes about in another way from there on. */
-export function modeWatch(connection: Connection): NamedWatch {
-  return { name: 'mode', terminal: false, value: connection.modeEnds, passed: () => connection.changeMode() }
+/** Where a flow comes about in another way from there on, or takes another phase. */
+export function changeWatches(connection: Connection): NamedWatch[] {
+  const change = { name: 'change', terminal: false } as const
+  return [
+    { ...change, value: connection.modeEnds, passed: () => connection.changeMode() },
+    { ...change, value: connection.liquidLeft, passed: () => connection.liquidGone() },
+  ]
 }
 
 /** Past the triple point of any volume. */

@@ -1,11 +1,13 @@
 import { Problem } from '@/lib/errors'
 import type { Fluid, State } from '@/lib/fluids'
+import { fallToZero } from '@/lib/numerics/ode'
 
 const MAX_FAST = 14
 /** Near enough to the throat that what is left enters the flux to third order (to second order, off the isentrope). */
 const NEAR_SONIC = 2e-4
 const NEAR_ISENTROPE = 3e-5
-const MAX_BISECTIONS = 60
+/** A throat is never at less than this part of the pressure upstream: for a gas of exponent 1.67 it is 0.49, for denser ones more. */
+const LOWEST_RATIO = 0.05
 /** Nearer to equal pressures than this, differences of enthalpy lose too many digits. */
 const NEARLY_EQUAL = 1e-4
 /** No flux: it would be faster than sound at that pressure. */
@@ -36,6 +38,8 @@ export class IsentropicFlux {
   private chokedG = 0
   private chokedP_Pa = 0
   private frozen = false
+  /** Speed over the speed of sound where `subsonic` looked last. */
+  private lastMach = 0
 
   constructor(private readonly fluid: Fluid) {}
 
@@ -79,7 +83,8 @@ export class IsentropicFlux {
     }
     this.evaluations += end.evaluations
     const speedSquared = 2 * (up.h_J_kg - end.h_J_kg)
-    if (speedSquared > soundSpeedSquared(end)) return FASTER
+    this.lastMach = Math.sqrt(Math.max(0, speedSquared) / soundSpeedSquared(end))
+    if (this.lastMach > 1) return FASTER
     return end.rho_kg_m3 * Math.sqrt(Math.max(0, speedSquared))
   }
 
@@ -161,28 +166,25 @@ export class IsentropicFlux {
   }
 
   /**
-   * Bisection on pressure for where the flow reaches the speed of sound. The speed jumps where the isentrope crosses the
-   * saturation line: the throat may then lie on the line itself. False where it would lie beyond the fluid's equation.
+   * Search over pressure for where the flow reaches the speed of sound, held by brackets. That speed jumps where the
+   * isentrope crosses the saturation line: the throat may then lie on the line itself. False where it lies beyond the
+   * fluid's equation.
    */
   private chokeByPressure(up: State): boolean {
-    let high = up.p_Pa
-    let low = 0.05 * up.p_Pa
-    let G = 0
-    let beyond = false
-    for (let count = 0; count < MAX_BISECTIONS && high - low > 1e-10 * high; count++) {
-      const p = count === 0 ? 0.55 * high : (low + high) / 2
-      const flux = this.subsonic(up, p)
-      if (flux >= 0) {
-        high = p
-        G = flux
-      } else {
-        low = p
-        beyond = flux === BEYOND
-      }
+    const lowest = Math.max(LOWEST_RATIO, (this.fluid.info.triple?.p_Pa ?? 0) / up.p_Pa)
+    if (!(lowest < 1)) return false
+    const spare = (drop: number) => {
+      const flux = this.subsonic(up, up.p_Pa * (1 - drop))
+      if (flux >= 0) return 1 - this.lastMach * this.lastMach
+      return flux === FASTER ? 1 - this.lastMach * this.lastMach : -1
     }
-    this.chokedG = G
-    this.chokedP_Pa = high
-    return !beyond
+    const most = (1 - lowest) * (1 - 1e-9)
+    const atMost = spare(most)
+    if (atMost > 0) return false
+    const drop = fallToZero(spare, NEARLY_EQUAL, 1, most, atMost, NEAR_SONIC)
+    this.chokedP_Pa = up.p_Pa * (1 - drop)
+    this.chokedG = this.subsonic(up, this.chokedP_Pa)
+    return true
   }
 }
 
