@@ -49,7 +49,7 @@ export const test = base.extend<Fixtures, { readonly server: TestServer }>({
     },
     { scope: 'worker', timeout: 300_000 },
   ],
-  baseURL: async ({ server }, provide) => use(server.url),
+  baseURL: async ({ server }, provide) => provide(server.url),
   complaints: [
     async ({}, provide) => {
       const complaints: string[] = []
