@@ -1,8 +1,11 @@
 import { z } from 'zod'
 
 const flag = z
-  .enum(['on', 'off', 'true', 'false', '1', '0'])
+  .enum(['on', 'off', 'true', 'false', '1', '0'], 'must be on or off')
   .transform((word) => word === 'on' || word === 'true' || word === '1')
+
+const portWords = 'must be a number from 0 to 65535'
+const port = z.coerce.number(portWords).int(portWords).min(0, portWords).max(65535, portWords)
 
 /** An empty variable is as good as none. */
 const given = <T extends z.ZodType>(schema: T) => z.preprocess((value) => (value === '' ? undefined : value), schema)
@@ -11,7 +14,7 @@ const schema = z
   .object({
     NODE_ENV: given(z.enum(['development', 'production', 'test']).default('development')),
     HOST: given(z.string().optional()),
-    PORT: given(z.coerce.number().int().min(0).max(65535).default(3000)),
+    PORT: given(port.default(3000)),
     LOG_LEVEL: given(z.enum(['trace', 'debug', 'info', 'warn', 'error', 'silent']).default('info')),
     CHARGEHAND_DATA: given(z.string().default('data')),
     CHARGEHAND_DEMO: given(flag.optional()),
