@@ -37,3 +37,9 @@ export const sectionType = (section: RigSection): Type => thingType(section)
 /** A column as an error names it: "the column Pressure". */
 export const columnWords = (column: { readonly label: string; readonly symbol: string }) =>
   `the column ${column.label || column.symbol}`
+
+/** What a column holds, in words: "pressure", "run". */
+export function kindWords(id: string): string {
+  if (Object.hasOwn(COLUMN_KINDS, id)) return COLUMN_KINDS[id as keyof typeof COLUMN_KINDS]
+  return isQuantity(id) ? quantity(id).label : id
+}
