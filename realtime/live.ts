@@ -16,6 +16,8 @@ import { Room } from './room'
 import { Rooms } from './rooms'
 
 const HEARTBEAT_ms = 30_000
+/** The longest that a timer can wait; beyond it, it would go off at once. */
+const LONGEST_TIMER_ms = 2 ** 31 - 1
 
 /** The live side of the server: takes upgrades under /live, and puts people into rooms. */
 export interface Live {
@@ -62,7 +64,8 @@ export async function openLive(open: OpenDatabase, environment: Environment, log
   })
 
   function welcome(socket: WebSocket, room: Room, sheetId: string, person: Person, expiresAt: Date): void {
-    const expiry = setTimeout(() => socket.close(CLOSE.signedOut.code, CLOSE.signedOut.reason), +expiresAt - Date.now())
+    const left_ms = Math.min(+expiresAt - Date.now(), LONGEST_TIMER_ms)
+    const expiry = setTimeout(() => socket.close(CLOSE.signedOut.code, CLOSE.signedOut.reason), left_ms)
     expiry.unref()
     const connection = new Connection(
       socket,

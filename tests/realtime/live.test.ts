@@ -198,6 +198,16 @@ describe('being shut out', () => {
     await vi.waitFor(() => expect([engineer.closed?.code, viewer.closed?.code]).toEqual([4404, 4404]))
   })
 
+  it('a session that lasts longer than a timer can wait stays', async () => {
+    const client = await HandMade.connect(server, world.sheet.id, {
+      userId: world.lead.id,
+      sessionSeconds: 40 * 86_400,
+    })
+    open.push(client)
+    await new Promise((resolve) => setTimeout(resolve, 200))
+    expect(client.closed).toBeUndefined()
+  })
+
   it('a session that runs out closes', async () => {
     const client = await HandMade.connect(server, world.sheet.id, { userId: world.lead.id, sessionSeconds: 1 })
     await vi.waitFor(() => expect(client.closed?.code).toBe(4401), { timeout: 5000 })

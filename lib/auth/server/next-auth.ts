@@ -14,6 +14,8 @@ export function authOptions(): NextAuthOptions {
   return {
     secret: authSecret(),
     session: { strategy: 'jwt', maxAge: SESSION_SECONDS },
+    // The cookie's age alone is a wish to the browser: the token has to run out with it.
+    jwt: { maxAge: SESSION_SECONDS },
     pages: { signIn: '/sign-in', signOut: '/sign-in', error: '/sign-in' },
     providers: [
       Credentials({
