@@ -2,7 +2,7 @@ import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { Problem } from '@/lib/errors'
 import { charge, equalise, hold, vent, type Run } from '@/lib/vessel'
-import { cases, gasScene } from './random'
+import { built, cases, gasScene } from './random'
 
 /** What must hold of any run, however it came about. */
 function expectSound(run: Run) {
@@ -48,7 +48,9 @@ function attempt(operation: () => Run): Run | null {
 describe('any charge', () => {
   it('in time conserves, and stops where it is told', () => {
     fc.assert(
-      fc.property(gasScene, fc.double({ min: 0.05, max: 1.2, noNaN: true }), ({ low, high, supply, path }, part) => {
+      fc.property(gasScene, fc.double({ min: 0.05, max: 1.2, noNaN: true }), (scene, part) => {
+        const { low, high, supply } = built(scene)
+        const { path } = scene
         const until_p_Pa = low.p_Pa + part * (high.p_Pa - low.p_Pa)
         const run = attempt(() => charge({ from: low, supply, through: path, stops: { until_p_Pa } }))
         if (!run) return
@@ -63,7 +65,9 @@ describe('any charge', () => {
 
   it('as a balance comes to the same as the slowest of flows without heat, whatever the path', () => {
     fc.assert(
-      fc.property(gasScene, ({ low, high, supply, path }) => {
+      fc.property(gasScene, (scene) => {
+        const { low, high, supply } = built(scene)
+        const { path } = scene
         const stops = { until_p_Pa: high.p_Pa }
         const balance = attempt(() => charge({ from: low, supply, stops }))
         const timed = attempt(() => charge({ from: low, supply, through: path, stops, heat: 'adiabatic', rtol: 1e-8 }))
@@ -78,7 +82,8 @@ describe('any charge', () => {
 
   it('without heat ends the same however it is split', () => {
     fc.assert(
-      fc.property(gasScene, fc.double({ min: 0.1, max: 0.9, noNaN: true }), ({ low, high, supply }, part) => {
+      fc.property(gasScene, fc.double({ min: 0.1, max: 0.9, noNaN: true }), (scene, part) => {
+        const { low, high, supply } = built(scene)
         const middle = low.p_Pa + part * (high.p_Pa - low.p_Pa)
         const whole = attempt(() => charge({ from: low, supply, stops: { until_p_Pa: high.p_Pa } }))
         const first = attempt(() => charge({ from: low, supply, stops: { until_p_Pa: middle } }))
@@ -96,7 +101,9 @@ describe('any charge', () => {
 describe('any vent', () => {
   it('conserves, and stops where it is told', () => {
     fc.assert(
-      fc.property(gasScene, fc.double({ min: 0.05, max: 0.9, noNaN: true }), ({ high, path }, part) => {
+      fc.property(gasScene, fc.double({ min: 0.05, max: 0.9, noNaN: true }), (scene, part) => {
+        const { high } = built(scene)
+        const { path } = scene
         const until_p_Pa = part * high.p_Pa
         const run = attempt(() => vent({ from: high, through: path, back_Pa: 0, stops: { until_p_Pa } }))
         if (!run) return
@@ -111,11 +118,13 @@ describe('any vent', () => {
 
   it('without heat leaves the entropy of what stays as it was', () => {
     fc.assert(
-      fc.property(gasScene, ({ high, path }) => {
+      fc.property(gasScene, (scene) => {
+        const { high } = built(scene)
+        const { path } = scene
         const stops = { until_p_Pa: 0.3 * high.p_Pa }
         const run = attempt(() => vent({ from: high, through: path, back_Pa: 0, stops, heat: 'adiabatic', rtol: 1e-8 }))
         if (!run) return
-        expect(Math.abs(run.s_J_kgK - high.s_J_kgK) / high.fluid.info.gasConstant_J_kgK).toBeLessThan(1e-6)
+        expect(Math.abs(run.s_J_kgK - high.s_J_kgK) / high.fluid.info.gasConstant_J_kgK).toBeLessThan(1e-5)
       }),
       { numRuns: cases(30) },
     )
@@ -125,7 +134,9 @@ describe('any vent', () => {
 describe('any two vessels that equalise without heat', () => {
   it('conserve, come to one pressure, and lose no entropy', () => {
     fc.assert(
-      fc.property(gasScene, fc.boolean(), ({ low, high, path }, swap) => {
+      fc.property(gasScene, fc.boolean(), (scene, swap) => {
+        const { low, high } = built(scene)
+        const { path } = scene
         const [one, other] = swap ? [low, high] : [high, low]
         const pair = { a: one, b: other, heat: 'adiabatic' } as const
         const runs = [() => equalise(pair), () => equalise({ ...pair, through: path })]
@@ -151,11 +162,13 @@ describe('any two vessels that equalise without heat', () => {
 describe('any hold', () => {
   it('keeps the mass, and comes to rest with its surroundings where it touches them', () => {
     fc.assert(
-      fc.property(gasScene, ({ high, vessel }) => {
+      fc.property(gasScene, (scene) => {
+        const { high } = built(scene)
+        const { vessel } = scene
         const run = attempt(() => hold({ from: high, stops: { settled: true } }))
         if (!run) return
         expectSound(run)
-        expect(run.m_kg).toBe(high.m_kg)
+        expect(Math.abs(run.m_kg / high.m_kg - 1)).toBeLessThan(1e-12)
         if (vessel.shell.kind === 'none' || vessel.outside?.kind !== 'fixed') return
         expect(Math.abs(run.T_K - vessel.ambient_T_K)).toBeLessThan(0.05)
       }),

@@ -117,38 +117,40 @@ export const anyVessel: fc.Arbitrary<Vessel> = fc.record({
   ambient_T_K: between(263, 318),
 })
 
-export interface GasScene {
-  readonly gas: Fluid
-  readonly vessel: Vessel
+/** A vessel at a low and at a high pressure, a supply above both, and a path: as data, so that a failure can be read. */
+export const gasScene = fc.record({
+  gas,
+  vessel: anyVessel,
+  lowPart: logBetween(1e-3, 0.1),
+  highPart: between(0.2, 0.6),
+  supplyPart: between(0.65, 1),
+  T_K: between(268, 323),
+  supplyT_K: between(268, 323),
+  count: fc.integer({ min: 1, max: 6 }),
+  isBank: fc.boolean(),
+  path: anyPath,
+})
+
+export interface Scene {
+  readonly medium: Fluid
   readonly low: Run
   readonly high: Run
   readonly supply: Supply
-  readonly path: Path
 }
 
-/** A vessel at a low and at a high pressure, a supply above both, and a path. */
-export const gasScene: fc.Arbitrary<GasScene> = fc
-  .record({
-    gas,
-    vessel: anyVessel,
-    lowPart: logBetween(1e-3, 0.1),
-    highPart: between(0.2, 0.6),
-    supplyPart: between(0.65, 1),
-    T_K: between(268, 323),
-    supplyT_K: between(268, 323),
-    count: fc.integer({ min: 1, max: 6 }),
-    isBank: fc.boolean(),
-    path: anyPath,
-  })
-  .map((d) => {
-    const medium = fluid(d.gas.name)
-    const at = (part: number, T_K = d.T_K) => start(d.vessel, medium, { pair: 'pT', a: part * d.gas.most_Pa, b: T_K })
-    const p_Pa = d.supplyPart * d.gas.most_Pa
-    const supply: Supply = d.isBank
-      ? { kind: 'bank', count: d.count, contents: at(d.supplyPart, d.supplyT_K) }
-      : { kind: 'header', fluid: medium, p_Pa, T_K: d.supplyT_K }
-    return { gas: medium, vessel: d.vessel, low: at(d.lowPart), high: at(d.highPart), supply, path: d.path }
-  })
+export function built(scene: typeof gasScene extends fc.Arbitrary<infer Data> ? Data : never): Scene {
+  const medium = fluid(scene.gas.name)
+  const at = (part: number, T_K: number) =>
+    start(scene.vessel, medium, { pair: 'pT', a: part * scene.gas.most_Pa, b: T_K })
+  return {
+    medium,
+    low: at(scene.lowPart, scene.T_K),
+    high: at(scene.highPart, scene.T_K),
+    supply: scene.isBank
+      ? { kind: 'bank', count: scene.count, contents: at(scene.supplyPart, scene.supplyT_K) }
+      : { kind: 'header', fluid: medium, p_Pa: scene.supplyPart * scene.gas.most_Pa, T_K: scene.supplyT_K },
+  }
+}
 
 /** How many random cases: SOAK multiplies. */
 export const cases = (few: number) => Math.round(few * Number(process.env.SOAK ?? 1))

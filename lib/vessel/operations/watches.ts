@@ -7,6 +7,8 @@ export interface NamedWatch extends Watch {
   readonly name: StoppedBy | 'change'
 }
 
+/** A stop is landed on so far short of it, relative: what a state found twice may differ by, so that it is not overshot. */
+const SHORT_OF = 2e-11
 /** At rest within this, K. */
 const RESTING_K = 0.01
 /** The run stops so close above the lowest temperature of the fluid's equation, relative. */
@@ -18,7 +20,7 @@ export function watchesFor(volume: ControlVolume, connections: readonly Connecti
   const reach = (name: StoppedBy, target: number | undefined, value: () => number, scale = Math.abs(target ?? 1)) => {
     if (target === undefined) return
     const side = value() <= target ? 1 : -1
-    watches.push({ name, terminal: true, value: () => (side * (target - value())) / scale })
+    watches.push({ name, terminal: true, value: () => (side * (target - value())) / scale - SHORT_OF })
   }
   reach('until_p', stops.until_p_Pa, () => volume.gas.p_Pa)
   reach('until_T', stops.until_T_K, () => volume.gas.T_K)

@@ -2,10 +2,12 @@ import { Problem } from '@/lib/errors'
 import type { Fluid, State } from '@/lib/fluids'
 import { fallToZero } from '@/lib/numerics/ode'
 
-const MAX_FAST = 14
+const MAX_FAST = 30
 /** Near enough to the throat that what is left enters the flux to third order (to second order, off the isentrope). */
 const NEAR_SONIC = 2e-4
 const NEAR_ISENTROPE = 3e-5
+/** So far off the isentrope, temperature is put right before anything is made of the speed. */
+const FAR_OFF = 4e-3
 /** A throat is never at less than this part of the pressure upstream: for a gas of exponent 1.67 it is 0.49, for denser ones more. */
 const LOWEST_RATIO = 0.05
 /** Nearer to equal pressures than this, differences of enthalpy lose too many digits. */
@@ -119,8 +121,8 @@ export class IsentropicFlux {
       if (!t) break
       const ds = up.s_J_kgK - t.s_J_kgK
       const dT = (t.T_K * ds) / t.cv_J_kgK
-      if (Math.abs(dT) > 0.05 * T) {
-        T += Math.sign(dT) * 0.05 * T
+      if (Math.abs(dT) > FAR_OFF * T) {
+        T += Math.max(-0.1 * T, Math.min(0.1 * T, dT))
         lastStep = 0
         continue
       }
@@ -132,7 +134,7 @@ export class IsentropicFlux {
       const F = sound2 - speedSquared
       if (lastStep !== 0) {
         const slope = (F - lastF) / (2 * sound2 * lastStep)
-        if (slope > 0.3 && slope < 6) this.gamma = slope
+        if (slope > 0.05 && slope < 6) this.gamma = slope
       }
       if (Math.abs(F) < NEAR_SONIC * sound2 && Math.abs(dT) < NEAR_ISENTROPE * T) {
         this.logRho = Math.log(rho / up.rho_kg_m3)
@@ -143,7 +145,7 @@ export class IsentropicFlux {
         this.chokedP_Pa = t.p_Pa + t.dpdT_rho_Pa_K * dT
         return true
       }
-      const step = Math.max(-0.3, Math.min(0.3, -F / (2 * this.gamma * sound2)))
+      const step = Math.max(-0.5, Math.min(0.5, -F / (2 * this.gamma * sound2)))
       lastStep = Math.abs(step) > 1e-7 ? step : 0
       lastF = F
       T = (T + dT) * Math.exp((t.dpdT_rho_Pa_K / (rho * t.cv_J_kgK)) * step)
@@ -171,17 +173,24 @@ export class IsentropicFlux {
    * fluid's equation.
    */
   private chokeByPressure(up: State): boolean {
-    const lowest = Math.max(LOWEST_RATIO, (this.fluid.info.triple?.p_Pa ?? 0) / up.p_Pa)
+    // From two phases it stays in two phases, so that it ends at the triple point.
+    const triple = up.x >= 0 ? (this.fluid.info.triple?.p_Pa ?? 0) : 0
+    const lowest = Math.max(LOWEST_RATIO, triple / up.p_Pa)
     if (!(lowest < 1)) return false
+    let nearestBeyond = Infinity
+    let nearestFaster = Infinity
     const spare = (drop: number) => {
       const flux = this.subsonic(up, up.p_Pa * (1 - drop))
-      if (flux >= 0) return 1 - this.lastMach * this.lastMach
-      return flux === FASTER ? 1 - this.lastMach * this.lastMach : -1
+      if (flux === FASTER) nearestFaster = Math.min(nearestFaster, drop)
+      if (flux !== BEYOND) return 1 - this.lastMach * this.lastMach
+      nearestBeyond = Math.min(nearestBeyond, drop)
+      return -1
     }
     const most = (1 - lowest) * (1 - 1e-9)
     const atMost = spare(most)
     if (atMost > 0) return false
     const drop = fallToZero(spare, NEARLY_EQUAL, 1, most, atMost, NEAR_SONIC)
+    if (nearestBeyond < nearestFaster) return false
     this.chokedP_Pa = up.p_Pa * (1 - drop)
     this.chokedG = this.subsonic(up, this.chokedP_Pa)
     return true

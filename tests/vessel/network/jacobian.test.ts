@@ -1,8 +1,9 @@
 import { describe, expect, it } from 'vitest'
+import type { Shell } from '@/lib/vessel'
 import { Network } from '@/lib/vessel/network/system'
 import { Reservoir } from '@/lib/vessel/network/boundary'
 import { link, ofBoundary, ofVolume, volumeFrom } from '@/lib/vessel/operations/parts'
-import { bank, filled, fluid, IDEAL, LAYERS, LUMPED, ORIFICE, vessel } from '../vessels'
+import { bank, filled, fluid, LAYERS, LUMPED, ORIFICE, vessel } from '../vessels'
 
 const jet = { inside: { kind: 'jet', inletDiameter_m: 5e-3, diameter_m: 0.23 } } as const
 
@@ -30,14 +31,15 @@ function plainJacobian(make: () => { network: Network; y: Float64Array }) {
   return { network, y, scales, plain: out }
 }
 
-function charging(shell: typeof LAYERS, inside: object) {
-  const from = filled(IDEAL, 50e5, vessel(shell, inside), 300)
+function charging(shell: Shell, inside: object) {
+  const nitrogen = fluid('nitrogen')
+  const from = filled(nitrogen, 50e5, vessel(shell, inside), 300)
   const volume = volumeFrom(
     { ...from, shell: { ...from.shell, cells_K: from.shell.cells_K.map((T, i) => T + i) } },
     'by_coefficients',
   )
-  const reservoir = ofBoundary(new Reservoir(IDEAL, 300e5, 288))
-  const way = { from: reservoir, to: ofVolume(volume), fluid: IDEAL, path: ORIFICE, mass_kg: 1, bothWays: false }
+  const reservoir = ofBoundary(new Reservoir(nitrogen, 300e5, 288))
+  const way = { from: reservoir, to: ofVolume(volume), fluid: nitrogen, path: ORIFICE, mass_kg: 1, bothWays: false }
   const network = new Network([volume], [link(way)])
   const y = new Float64Array(network.size)
   volume.write(from.m_kg, from.u_J_kg, y, 0)

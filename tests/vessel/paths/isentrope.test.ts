@@ -5,10 +5,14 @@ import { IsentropicFlux } from '@/lib/vessel/paths/isentrope'
 import { cases, GASES } from '../random'
 import { fluid, IDEAL } from '../vessels'
 
-/** The flux at a pressure on the isentrope, by the definition alone. */
+/** The flux at a pressure on the isentrope, by the definition alone; none where the equation does not reach. */
 const fluxAt = (gas: Fluid, up: State, p_Pa: number) => {
-  const end = gas.state('ps', p_Pa, up.s_J_kgK)
-  return end.rho_kg_m3 * Math.sqrt(2 * Math.max(0, up.h_J_kg - end.h_J_kg))
+  try {
+    const end = gas.state('ps', p_Pa, up.s_J_kgK)
+    return end.rho_kg_m3 * Math.sqrt(2 * Math.max(0, up.h_J_kg - end.h_J_kg))
+  } catch {
+    return 0
+  }
 }
 
 /** The greatest flux by searching over pressure, narrower and narrower. */
@@ -37,6 +41,7 @@ describe('choked flux', () => {
         ({ name, most_Pa }, part, T_K) => {
           const gas = fluid(name)
           const up = gas.state('pT', part * most_Pa, T_K)
+          fc.pre(up.phase !== 'liquid')
           const { G_kg_m2s, p_Pa } = new IsentropicFlux(gas).choked(up)
           const best = greatest(gas, up, 0.2 * up.p_Pa)
           expect(Math.abs(G_kg_m2s / best - 1)).toBeLessThan(1e-6)
@@ -70,7 +75,9 @@ describe('choked flux', () => {
     const up = propane.state('pT', 30e5, 300)
     const { G_kg_m2s, p_Pa } = new IsentropicFlux(propane).choked(up)
     const boiling = propane.saturationAtT(300).p_Pa
-    expect(Math.abs(p_Pa / boiling - 1)).toBeLessThan(0.02)
+    // It cools a little on the way, so that it begins to boil a little below the vapour pressure upstream.
+    expect(p_Pa / boiling).toBeLessThan(1)
+    expect(p_Pa / boiling).toBeGreaterThan(0.95)
     expect(Math.abs(G_kg_m2s / Math.sqrt(2 * up.rho_kg_m3 * (up.p_Pa - p_Pa)) - 1)).toBeLessThan(0.02)
   })
 
@@ -99,10 +106,10 @@ describe('flux to a pressure', () => {
     const isentrope = new IsentropicFlux(nitrogen)
     const { G_kg_m2s, p_Pa } = isentrope.choked(up)
     let last = G_kg_m2s
-    for (let p = p_Pa; p < up.p_Pa; p += (up.p_Pa - p_Pa) / 200) {
+    for (let p = p_Pa; p < 0.999 * up.p_Pa; p += (up.p_Pa - p_Pa) / 200) {
       const G = isentrope.flux(up, p)
       expect(G).toBeLessThanOrEqual(last * (1 + 1e-9))
-      expect(Math.abs(G / Math.min(G_kg_m2s, fluxAt(nitrogen, up, p)) - 1)).toBeLessThan(1e-8)
+      expect(Math.abs(G / fluxAt(nitrogen, up, p) - 1)).toBeLessThan(1e-8)
       last = G
     }
     expect(isentrope.flux(up, up.p_Pa)).toBe(0)
