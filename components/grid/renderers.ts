@@ -24,7 +24,12 @@ export function drawLabel(td: HTMLTableCellElement, row: RowView | undefined): v
   td.append(document.createTextNode(row.label || 'unnamed state'))
 }
 
-export function drawCell(td: HTMLTableCellElement, cell: CellView | undefined, column: ColumnView, peer: PeerMark | undefined): void {
+export function drawCell(
+  td: HTMLTableCellElement,
+  cell: CellView | undefined,
+  column: ColumnView,
+  peer: PeerMark | undefined,
+): void {
   td.replaceChildren()
   const classes = ['cell', `cell-${cell?.origin ?? 'empty'}`]
   td.removeAttribute('title')

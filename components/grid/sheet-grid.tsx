@@ -7,7 +7,7 @@ import { registerCellType, TextCellType } from 'handsontable/cellTypes'
 import { AutoColumnSize, Autofill, CopyPaste, ManualColumnResize, registerPlugin } from 'handsontable/plugins'
 import 'handsontable/styles/handsontable.css'
 import 'handsontable/styles/ht-theme-main.css'
-import { useEffect, useMemo, useRef } from 'react'
+import { useEffect, useLayoutEffect, useMemo, useRef } from 'react'
 import type { SheetView } from '@/lib/sheet/view'
 import { LABEL_COLUMN, cellAt, copyText, editText, gridRows, visibleColumns } from './model'
 import './grid.css'
@@ -46,19 +46,25 @@ const STATE_WIDTH = 190
  */
 export function SheetGrid(props: SheetGridProps) {
   const table = useRef<HotTableRef>(null)
-  // the grid's hooks are set once and read what is newest here
   const latest = useRef(props)
-  latest.current = props
+  useLayoutEffect(() => {
+    latest.current = props
+  })
 
   const { view, canEdit, licenseKey, peers } = props
   const rowIds = view.rows.map((row) => row.id).join()
   const columnIds = visibleColumns(view)
-    .map((column) => `${column.id}:${column.width ?? ''}:${column.unit}:${column.label}:${column.symbol}:${column.display}`)
+    .map(
+      (column) =>
+        `${column.id}:${column.width ?? ''}:${column.unit}:${column.label}:${column.symbol}:${column.display}`,
+    )
     .join()
 
   const settings = useMemo(
-    () => settingsFor(latest, canEdit),
-    // rows and columns are read through `latest`: settings change with their number and order alone
+    // the grid's hooks are set once and read what is newest through `latest`, when they are called; what is read now
+    // changes with the number and order of rows and columns alone
+    // eslint-disable-next-line react-hooks/refs
+    () => settingsFor(latest, view, canEdit),
     // eslint-disable-next-line react-hooks/exhaustive-deps
     [rowIds, columnIds, canEdit],
   )
@@ -85,10 +91,14 @@ function undoKeys(event: React.KeyboardEvent, { onUndo, onRedo }: SheetGridProps
   else onUndo()
 }
 
-function settingsFor(latest: { readonly current: SheetGridProps }, canEdit: boolean): Handsontable.GridSettings {
+function settingsFor(
+  latest: { readonly current: SheetGridProps },
+  now: SheetView,
+  canEdit: boolean,
+): Handsontable.GridSettings {
   const view = () => latest.current.view
-  const columns = visibleColumns(view())
-  const rows = gridRows(view(), canEdit)
+  const columns = visibleColumns(now)
+  const rows = gridRows(now, canEdit)
   // the editor and the clipboard ask for the text; nothing is ever stored here
   const accessors = [LABEL_COLUMN, ...columns.map((_, i) => i + 1)].map(
     (column) => (record: unknown, value?: unknown) =>
@@ -105,7 +115,8 @@ function settingsFor(latest: { readonly current: SheetGridProps }, canEdit: bool
   return {
     data: rows.map((_, row) => [row]),
     columns: accessors.map((data) => ({ data, renderer, readOnly: !canEdit })),
-    colWidths: (column: number) => (column === LABEL_COLUMN ? STATE_WIDTH : (columns[column - 1].width ?? defaultWidth(columns[column - 1].display))),
+    colWidths: (column: number) =>
+      column === LABEL_COLUMN ? STATE_WIDTH : (columns[column - 1].width ?? defaultWidth(columns[column - 1].display)),
     rowHeaders: true,
     rowHeaderWidth: 38,
     colHeaders: true,
@@ -127,7 +138,10 @@ function settingsFor(latest: { readonly current: SheetGridProps }, canEdit: bool
     afterGetColHeader: (column, th) => {
       if (column < 0) return
       const columnView = columns[column - 1]
-      th.classList.toggle('head-number', columnView !== undefined && columnView.unit !== '' && columnView.display === 'number')
+      th.classList.toggle(
+        'head-number',
+        columnView !== undefined && columnView.unit !== '' && columnView.display === 'number',
+      )
       drawHeader(th, columnView)
     },
     beforeChange: (changes, source) => {
@@ -139,7 +153,9 @@ function settingsFor(latest: { readonly current: SheetGridProps }, canEdit: bool
         const column = accessors.indexOf(prop as unknown as (typeof accessors)[number])
         if (column < 0 || before === after || (row >= view().rows.length && !String(after ?? '').trim())) return []
         const id = rows[row]?.id ?? null
-        return [{ row: id, column: column === LABEL_COLUMN ? null : columns[column - 1].id, typed: String(after ?? '') }]
+        return [
+          { row: id, column: column === LABEL_COLUMN ? null : columns[column - 1].id, typed: String(after ?? '') },
+        ]
       })
       if (edits.length > 0) latest.current.onEdit(edits)
       return false

@@ -24,7 +24,8 @@ export function ArgumentField(props: ArgumentFieldProps) {
 }
 
 /** "p_high" is shown as "p high": symbols that people know, spaced. */
-const labelOf = (parameter: Parameter) => `${parameter.name.replaceAll('_', ' ')}${parameter.optional || parameter.default !== undefined ? '' : ' *'}`
+const labelOf = (parameter: Parameter) =>
+  `${parameter.name.replaceAll('_', ' ')}${parameter.optional || parameter.default !== undefined ? '' : ' *'}`
 
 function TextArgument({ parameter, value, scope, onChange }: ArgumentFieldProps) {
   const list = useId()
@@ -55,7 +56,9 @@ function TextArgument({ parameter, value, scope, onChange }: ArgumentFieldProps)
 function quantityOfParameter(parameter: Parameter) {
   const type = typesOf(parameter).find((candidate) => candidate.kind === 'quantity')
   if (type?.kind !== 'quantity') return undefined
-  return QUANTITIES.find((quantity) => sameDimension(quantity.dimension, type.dimension) && quantity.scale === type.scale)
+  return QUANTITIES.find(
+    (quantity) => sameDimension(quantity.dimension, type.dimension) && quantity.scale === type.scale,
+  )
 }
 
 function example(parameter: Parameter): string {
@@ -76,7 +79,9 @@ export function mistakeIn(value: string, parameter: Parameter, scope: Scope): st
   if (value.trim() === '') return null
   const types = typesOf(parameter)
   const text = tidy(value, parameter)
-  const all = types.map((expected) => analyse(text, scope, VOCABULARY, { expected, expectedWords: parameter.name.replaceAll('_', ' ') }))
+  const all = types.map((expected) =>
+    analyse(text, scope, VOCABULARY, { expected, expectedWords: parameter.name.replaceAll('_', ' ') }),
+  )
   return all.some((mistakes) => mistakes.length === 0) ? null : all[0][0].reason
 }
 
@@ -117,7 +122,9 @@ function NestedField({ parameter, value, scope, onChange, kind }: ArgumentFieldP
                 parameter={inner}
                 value={parts.arguments[inner.name] ?? ''}
                 scope={scope}
-                onChange={(next) => onChange(callText({ ...parts, arguments: { ...parts.arguments, [inner.name]: next } }))}
+                onChange={(next) =>
+                  onChange(callText({ ...parts, arguments: { ...parts.arguments, [inner.name]: next } }))
+                }
               />
             ))}
           {repeating && (
@@ -128,10 +135,17 @@ function NestedField({ parameter, value, scope, onChange, kind }: ArgumentFieldP
                   parameter={{ ...repeating, name: `${repeating.name} ${i + 1}`, repeats: false, optional: true }}
                   value={text}
                   scope={scope}
-                  onChange={(next) => onChange(callText({ ...parts, repeated: parts.repeated.map((other, j) => (j === i ? next : other)) }))}
+                  onChange={(next) =>
+                    onChange(
+                      callText({ ...parts, repeated: parts.repeated.map((other, j) => (j === i ? next : other)) }),
+                    )
+                  }
                 />
               ))}
-              <Button small onClick={() => onChange(callText({ ...parts, repeated: [...parts.repeated, first(repeating)] }))}>
+              <Button
+                small
+                onClick={() => onChange(callText({ ...parts, repeated: [...parts.repeated, first(repeating)] }))}
+              >
                 Add a {repeating.name}
               </Button>
             </div>

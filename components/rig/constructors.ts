@@ -5,7 +5,9 @@ import { FUNCTIONS, VOCABULARY } from '@/lib/sheet/engine/vocabulary'
 
 /** Constructors of the function table that make one kind of thing, in the order of the table. */
 export const constructorsOf = (kind: string): readonly FunctionSpec[] =>
-  FUNCTIONS.filter((spec) => typeof spec.result === 'object' && spec.result.kind === 'thing' && spec.result.thing === kind)
+  FUNCTIONS.filter(
+    (spec) => typeof spec.result === 'object' && spec.result.kind === 'thing' && spec.result.thing === kind,
+  )
 
 /** What can be added to a section of the rig. Gases there are always by name; ideal ones have a constructor of their own. */
 export const addable = (section: RigSection): readonly FunctionSpec[] => constructorsOf(section)

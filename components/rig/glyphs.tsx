@@ -44,7 +44,12 @@ function drawing({ section, make, arguments: given }: ThingView) {
       return <Vessel shoulder={shoulderColour((given.fluid ?? '').replaceAll('"', '').toLowerCase())} />
     case 'supply':
       return make === 'bank' ? (
-        <path d="M2 34V12q0-4 3-4t3 4v22zM9 34V12q0-4 3-4t3 4v22zM16 34V12q0-4 2.500-4t2.500 4v22z" fill="#DCE6EA" stroke={INK} strokeWidth="1.3" />
+        <path
+          d="M2 34V12q0-4 3-4t3 4v22zM9 34V12q0-4 3-4t3 4v22zM16 34V12q0-4 2.500-4t2.500 4v22z"
+          fill="#DCE6EA"
+          stroke={INK}
+          strokeWidth="1.3"
+        />
       ) : make === 'machine' ? (
         <g {...STROKE}>
           <circle cx="11" cy="20" r="9" />
@@ -65,14 +70,21 @@ function drawing({ section, make, arguments: given }: ThingView) {
         <path d="M1 12h20M1 28h20M11 12v6M11 22v6" {...STROKE} strokeWidth={1.8} />
       )
     case 'surroundings':
-      return <path d="M2 14q5-5 9 0t9 0M2 21q5-5 9 0t9 0M2 28q5-5 9 0t9 0" stroke="#1F6FA8" strokeWidth="1.5" fill="none" />
+      return (
+        <path d="M2 14q5-5 9 0t9 0M2 21q5-5 9 0t9 0M2 28q5-5 9 0t9 0" stroke="#1F6FA8" strokeWidth="1.5" fill="none" />
+      )
   }
 }
 
 function Vessel({ shoulder }: { readonly shoulder: string }) {
   return (
     <>
-      <path d="M8 1h6v4q6 2 6 8v22a4 4 0 0 1-4 4H6a4 4 0 0 1-4-4V13q0-6 6-8z" fill="#fff" stroke={INK} strokeWidth="1.3" />
+      <path
+        d="M8 1h6v4q6 2 6 8v22a4 4 0 0 1-4 4H6a4 4 0 0 1-4-4V13q0-6 6-8z"
+        fill="#fff"
+        stroke={INK}
+        strokeWidth="1.3"
+      />
       <path d="M2.7 14V11q.6-4 5.6-5.6V1.6h5.4v3.8q5 1.6 5.6 5.6v3z" fill={shoulder} />
       <path d="M2.700 18h16.600v17a3.400 3.400 0 0 1-3.400 3.400H6.100a3.400 3.400 0 0 1-3.400-3.400z" fill="#CFE0E6" />
     </>

@@ -53,7 +53,12 @@ export function RigPanel({ things, scope, canEdit, edits, usesOf }: RigPanelProp
           <section key={section} aria-label={HEADINGS[section].plural} className="mb-3">
             <h2 className="mb-1.5 flex items-center justify-between text-[12px] font-bold text-dim">
               {HEADINGS[section].plural}
-              {canEdit && !full && <AddButton section={section} onAdd={(make) => setOpen({ id: null, thing: { section, name: '', make, arguments: {} } })} />}
+              {canEdit && !full && (
+                <AddButton
+                  section={section}
+                  onAdd={(make) => setOpen({ id: null, thing: { section, name: '', make, arguments: {} } })}
+                />
+              )}
             </h2>
             {here.map((thing) => (
               <ThingCard
@@ -71,7 +76,11 @@ export function RigPanel({ things, scope, canEdit, edits, usesOf }: RigPanelProp
       })}
       {open && (
         <ThingDialog
-          title={open.id ? `Edit ${open.thing.name}` : `New ${HEADINGS[open.thing.section].one}: ${open.thing.make.replaceAll('_', ' ')}`}
+          title={
+            open.id
+              ? `Edit ${open.thing.name}`
+              : `New ${HEADINGS[open.thing.section].one}: ${open.thing.make.replaceAll('_', ' ')}`
+          }
           thing={open.thing}
           scope={scope}
           taken={taken.filter((name) => name !== open.thing.name)}
@@ -80,7 +89,12 @@ export function RigPanel({ things, scope, canEdit, edits, usesOf }: RigPanelProp
         />
       )}
       {removing && (
-        <Dialog open onClose={() => setRemoving(null)} title={`Remove ${removing.name}?`} description={usedWords(usesOf(removing.id))}>
+        <Dialog
+          open
+          onClose={() => setRemoving(null)}
+          title={`Remove ${removing.name}?`}
+          description={usedWords(usesOf(removing.id))}
+        >
           <div className="flex justify-end gap-2">
             <Button onClick={() => setRemoving(null)}>Keep it</Button>
             <Button
@@ -141,7 +155,9 @@ interface ThingCardProps {
 
 function ThingCard({ thing, canEdit, onEdit, onDuplicate, onRemove }: ThingCardProps) {
   return (
-    <div className={`relative mb-1.5 flex gap-2.5 rounded-lg border bg-white px-2.5 py-2 ${thing.error ? 'border-hot' : 'border-line'}`}>
+    <div
+      className={`relative mb-1.5 flex gap-2.5 rounded-lg border bg-white px-2.5 py-2 ${thing.error ? 'border-hot' : 'border-line'}`}
+    >
       <ThingGlyph thing={thing} />
       <div className="min-w-0 flex-1">
         <p className="truncate pr-6 font-bold">{thing.name || 'unnamed'}</p>
@@ -160,7 +176,11 @@ function ThingCard({ thing, canEdit, onEdit, onDuplicate, onRemove }: ThingCardP
           <Menu
             label={thing.name}
             trigger={
-              <button type="button" aria-label={`Actions for ${thing.name}`} className="grid size-7 place-items-center rounded-md text-dim hover:bg-steel">
+              <button
+                type="button"
+                aria-label={`Actions for ${thing.name}`}
+                className="grid size-7 place-items-center rounded-md text-dim hover:bg-steel"
+              >
                 ⋯
               </button>
             }

@@ -33,8 +33,15 @@ export function ThingDialog({ title, thing, scope, taken, onSave, onClose }: Thi
   const filled = Object.fromEntries(
     spec.parameters.map((parameter) => [parameter.name, tidy(given[parameter.name] ?? '', parameter)]),
   )
-  const nameMistake = name.trim() === '' ? 'it needs a name, by which formulas call it' : taken.includes(name.trim()) ? `${name.trim()} is taken: a name means one thing` : null
-  const compilation = compile(callText({ make: thing.make, arguments: filled, repeated: [] }), scope, VOCABULARY, { expected: thingType(thing.section) })
+  const nameMistake =
+    name.trim() === ''
+      ? 'it needs a name, by which formulas call it'
+      : taken.includes(name.trim())
+        ? `${name.trim()} is taken: a name means one thing`
+        : null
+  const compilation = compile(callText({ make: thing.make, arguments: filled, repeated: [] }), scope, VOCABULARY, {
+    expected: thingType(thing.section),
+  })
   const whole = compilation.ok ? null : compilation.fault.reason
   const wrong = spec.parameters.some((parameter) => mistakeIn(given[parameter.name] ?? '', parameter, scope))
 
@@ -48,7 +55,14 @@ export function ThingDialog({ title, thing, scope, taken, onSave, onClose }: Thi
   return (
     <Dialog open onClose={onClose} title={title} description={spec.help} wide>
       <form onSubmit={save} className="flex flex-col gap-4" noValidate>
-        <TextField label="Name *" value={name} autoFocus maxLength={60} error={tried ? nameMistake : null} onChange={(event) => setName(event.target.value)} />
+        <TextField
+          label="Name *"
+          value={name}
+          autoFocus
+          maxLength={60}
+          error={tried ? nameMistake : null}
+          onChange={(event) => setName(event.target.value)}
+        />
         <div className="grid gap-4 sm:grid-cols-2">
           {spec.parameters.map((parameter) => (
             <ArgumentField

@@ -101,7 +101,13 @@ function createState(latest: Latest, access: Compartment): EditorState {
       look,
       history(),
       autocompletion({ override: [(context) => completions(context, latest)], icons: false }),
-      keymap.of([...completionKeymap, { key: 'Enter', run: commit }, { key: 'Escape', run: cancel }, ...historyKeymap, ...defaultKeymap]),
+      keymap.of([
+        ...completionKeymap,
+        { key: 'Enter', run: commit },
+        { key: 'Escape', run: cancel },
+        ...historyKeymap,
+        ...defaultKeymap,
+      ]),
       linter((view) => mistakes(view, latest), { delay: 300 }),
       // a formula is one line, whatever is pasted
       EditorState.transactionFilter.of((transaction) => (transaction.newDoc.lines > 1 ? [] : transaction)),

@@ -56,9 +56,15 @@ function Line({ selected, scope, canEdit, onCell, onColumn }: FormulaLineProps &
       />
       <span className={`text-[13px] ${wrong ? 'font-semibold text-hot' : 'text-dim'}`}>
         {kindWords(column.quantity)}
-        {column.unit && column.unit !== '1' ? `, ${column.unit}` : ''} {wrong ? '✕' : cell.value.kind === 'empty' ? '' : '✓'}
+        {column.unit && column.unit !== '1' ? `, ${column.unit}` : ''}{' '}
+        {wrong ? '✕' : cell.value.kind === 'empty' ? '' : '✓'}
       </span>
-      {followsColumn && canEdit && <span className="rounded bg-mark-soft px-2 py-0.5 text-[12px] text-mark-ink">whole column</span>}
+      {followsColumn && canEdit && (
+        <span className="rounded bg-mark-soft px-2 py-0.5 text-[12px] text-mark-ink">whole column</span>
+      )}
+      {cell.value.kind === 'error' && (
+        <p className="w-full text-[13px] font-semibold text-hot xl:hidden">{cell.value.reason}</p>
+      )}
       {call && <Signature call={call} />}
     </div>
   )
@@ -71,7 +77,13 @@ function Signature({ call }: { readonly call: CallAt }) {
       {signature(call.spec).map((part, i) => (
         <span key={part.name} title={part.help}>
           {i > 0 && ', '}
-          <span className={part.name === call.parameter ? 'bg-mark-soft font-bold text-ink' : part.optional ? 'opacity-70' : ''}>{part.text}</span>
+          <span
+            className={
+              part.name === call.parameter ? 'bg-mark-soft font-bold text-ink' : part.optional ? 'opacity-70' : ''
+            }
+          >
+            {part.text}
+          </span>
         </span>
       ))}
       ) <span className="font-sans">{call.spec.help}</span>

@@ -20,6 +20,8 @@ export function useOpenSheet(sheetId: string, hyperformulaLicenseKey: string): O
     const doc = new Y.Doc()
     const session = new SheetSession(doc, workerPort(), { hyperformulaLicenseKey })
     const connection = new LiveConnection(doc, sheetId)
+    // a worker and a socket are opened here, not derived: they live and die with this effect
+    // eslint-disable-next-line react-hooks/set-state-in-effect
     setOpen({ session, connection })
     return () => {
       connection.close()
@@ -32,4 +34,5 @@ export function useOpenSheet(sheetId: string, hyperformulaLicenseKey: string): O
 
 export const useView = (session: SheetSession): SheetView => useSyncExternalStore(session.subscribe, session.getView)
 
-export const useLive = (connection: LiveConnection): LiveState => useSyncExternalStore(connection.subscribe, connection.getState)
+export const useLive = (connection: LiveConnection): LiveState =>
+  useSyncExternalStore(connection.subscribe, connection.getState)

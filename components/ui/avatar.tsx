@@ -1,5 +1,14 @@
 /** Colours that people in a room are told apart by, dark enough for white initials beside them and pale for a fill. */
-export const PEOPLE_COLOURS = ['#7A4FC2', '#0F7B6C', '#B3541E', '#2563A8', '#A8336B', '#5E6B00', '#7B3F00', '#4A5568'] as const
+export const PEOPLE_COLOURS = [
+  '#7A4FC2',
+  '#0F7B6C',
+  '#B3541E',
+  '#2563A8',
+  '#A8336B',
+  '#5E6B00',
+  '#7B3F00',
+  '#4A5568',
+] as const
 
 interface AvatarProps {
   readonly initials: string

@@ -19,7 +19,11 @@ export function Field({ label, hint, error, children }: FieldProps) {
       </label>
       {children({ id, describedBy: below ? `${id}-below` : undefined })}
       {below && (
-        <p id={`${id}-below`} className={`text-[12.5px] ${error ? 'font-semibold text-hot' : 'text-dim'}`} role={error ? 'alert' : undefined}>
+        <p
+          id={`${id}-below`}
+          className={`text-[12.5px] ${error ? 'font-semibold text-hot' : 'text-dim'}`}
+          role={error ? 'alert' : undefined}
+        >
           {below}
         </p>
       )}
@@ -27,7 +31,8 @@ export function Field({ label, hint, error, children }: FieldProps) {
   )
 }
 
-const CONTROL = 'w-full rounded-md border border-line bg-white px-2.5 py-1.5 text-ink placeholder:text-dim/70 aria-[invalid=true]:border-hot'
+const CONTROL =
+  'w-full rounded-md border border-line bg-white px-2.5 py-1.5 text-ink placeholder:text-dim/70 aria-[invalid=true]:border-hot'
 
 type TextFieldProps = Omit<FieldProps, 'children'> & InputHTMLAttributes<HTMLInputElement> & { readonly mono?: boolean }
 

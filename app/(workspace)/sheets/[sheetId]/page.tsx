@@ -5,7 +5,6 @@ import { initialsOf } from '@/lib/auth/initials'
 import { currentActor, orRefuse } from '@/lib/auth/server/current'
 import { environment } from '@/lib/env'
 import { openSheet } from '@/lib/workspace/server/open-sheet'
-import { renameSheet } from './actions'
 
 interface SheetPageProps {
   readonly params: Promise<{ sheetId: string }>
@@ -34,7 +33,6 @@ export default async function SheetPage({ params }: SheetPageProps) {
       can={can}
       handsontableLicenseKey={handsontableLicenseKey}
       hyperformulaLicenseKey={hyperformulaLicenseKey}
-      actions={{ rename: renameSheet.bind(null, sheet.id) }}
     />
   )
 }
