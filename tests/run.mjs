@@ -75,6 +75,8 @@ function findChromium() {
   return { missing }
 }
 
+// What a fresh machine does first: it fails where package.json and package-lock.json do not belong together.
+await check('lock file', 'npm', ['ci', '--dry-run', '--no-audit', '--no-fund'])
 // next typegen writes the types of routes, which the compiler needs; the rest is cheap enough to follow.
 await check('types of routes', bin('next'), ['typegen'])
 await Promise.all([
