@@ -14,6 +14,7 @@ const MAX_ROUNDS = 40
  * A vessel while it is being integrated. Its part of the solution vector is mass, internal energy and, where heat passes
  * by coefficients, the energy of each cell of its shell; in the limit of a shell at the gas's temperature the shell's
  * energy is part of the second. Mass and energy, not density and temperature, so that what passes is conserved exactly.
+ * Where temperature is held, the second is what the contents would have without the heat that holds it.
  */
 export class ControlVolume {
   readonly wall: Wall
@@ -123,6 +124,11 @@ export class ControlVolume {
     throw new Problem('unconverged', 'no temperature at which gas and shell together hold their energy was found')
   }
 
+  /** Heat that has held the temperature, J. */
+  get heldBy_J() {
+    return this.m_kg * this.gas.u_J_kg - this.energy_J
+  }
+
   /** What leaves, at rest. */
   rest(draw: Draw): State {
     const { gas } = this
@@ -173,7 +179,6 @@ export class ControlVolume {
       }
       out[at + 1 + this.cells] -= this.outer.heat_W
     }
-    if (this.heat === 'isothermal') heat = this.isothermalHeat(out[at], out[at + 1])
     out[at + 1] += heat
     this.dT_K_s = this.temperatureRate(out[at], out[at + 1])
     this.dp_Pa_s = this.pressureRate(out[at], out[at + 1])
@@ -193,10 +198,6 @@ export class ControlVolume {
     return (
       this.gas.dpdT_rho_Pa_K * this.temperatureRate(dm, dE) + (this.gas.dpdrho_T_Pa_m3_kg * dm) / this.vessel.volume_m3
     )
-  }
-
-  private isothermalHeat(dm: number, dE: number): number {
-    return this.energyWithMass() * dm - dE
   }
 
   /** d(m u)/dm at constant temperature and volume. */

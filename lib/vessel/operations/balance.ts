@@ -22,7 +22,7 @@ export function balanceOf(plan: Plan, network: Network, y: Float64Array) {
     mass += m - from.m_kg
     energy += m * u - (from.m_kg > 0 ? from.m_kg * from.u_J_kg : 0)
     if (wall.cells > 0) energy += wallEnergy(wall, cells_K) - wallEnergy(wall, from.shell.cells_K)
-    if (volume.heat === 'isothermal') energy -= y[into]
+    if (volume.heat === 'isothermal') energy -= volume.heldBy_J
     if (volume.cells > 0) energy += y[lost]
     massScale = Math.max(massScale, m, from.m_kg)
     energyScale = Math.max(energyScale, m * gas.cv_J_kgK * gas.T_K, Math.abs(y[into]), Math.abs(y[lost]))

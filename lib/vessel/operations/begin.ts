@@ -33,9 +33,7 @@ function seed(network: Network, index: number, volume: ControlVolume, y: Float64
   const h = supplied(connection)
   const rho = fluid.state('pT', SEED_Pa, vessel.ambient_T_K).rho_kg_m3
   const m = rho * vessel.volume_m3
-  const adiabatic = fluid.state('rhou', rho, h).T_K
-  if (volume.heat === 'isothermal') volume.write(m, fluid.state('rhoT', rho, volume.fixed_K).u_J_kg, y, at)
-  else volume.write(m, h, y, at)
+  volume.write(m, h, y, at)
   if (volume.cells > 0) {
     const rates = new Float64Array(network.size)
     const warming = (T_K: number) => {
@@ -43,6 +41,7 @@ function seed(network: Network, index: number, volume: ControlVolume, y: Float64
       network.rates(y, rates)
       return volume.dT_K_s
     }
+    const adiabatic = fluid.state('rhou', rho, h).T_K
     const shell_K = volume.cells_K[0]
     const [low, high] = [Math.min(shell_K, adiabatic), Math.max(shell_K, adiabatic)]
     const [atLow, atHigh] = [warming(low), warming(high)]
@@ -51,7 +50,6 @@ function seed(network: Network, index: number, volume: ControlVolume, y: Float64
     y[at + 2] -= y[at + 1] - m * h
     y[network.heatLedger(index)[0]] = y[at + 1] - m * h
   }
-  if (volume.heat === 'isothermal') y[network.heatLedger(index)[0]] = y[at + 1] - m * h
   const [mass, enthalpy] = network.flowLedger(through)
   y[mass] = m
   y[enthalpy] = m * h

@@ -21,7 +21,6 @@ export function report({ plan, network, index, y, recorder, stoppedBy, outcome, 
   const volume = network.volumes[index]
   const from = plan.from[index]
   const { gas } = volume
-  const [into] = network.heatLedger(index)
   return {
     operation: plan.operation,
     vessel: volume.vessel,
@@ -38,7 +37,7 @@ export function report({ plan, network, index, y, recorder, stoppedBy, outcome, 
     shell: shellOf(network, index, from),
     ...recorder.extremes,
     moved_kg: volume.m_kg - from.m_kg,
-    heat_J: volume.heat === 'shell_at_gas_temperature' ? shellGave(network, index, from) : y[into],
+    heat_J: heatOf(network, index, from, y),
     time_s: plan.timeless ? null : outcome.t,
     stoppedBy,
     balance,
@@ -64,8 +63,18 @@ function shellOf(network: Network, index: number, from: Run): ShellState {
   }
 }
 
-/** Energy that a shell at its contents' temperature has given them. */
-function shellGave(network: Network, index: number, from: Run): number {
-  const { wall, cells_K } = network.volumes[index]
-  return wallEnergy(wall, from.shell.cells_K) - wallEnergy(wall, cells_K)
+/** Heat that the contents have taken up. */
+function heatOf(network: Network, index: number, from: Run, y: Float64Array): number {
+  const volume = network.volumes[index]
+  const { wall, cells_K } = volume
+  switch (volume.heat) {
+    case 'adiabatic':
+      return 0
+    case 'by_coefficients':
+      return y[network.heatLedger(index)[0]]
+    case 'isothermal':
+      return volume.heldBy_J
+    case 'shell_at_gas_temperature':
+      return wallEnergy(wall, from.shell.cells_K) - wallEnergy(wall, cells_K)
+  }
 }
