@@ -120,7 +120,7 @@ function settingsFor(
     rowHeaders: true,
     rowHeaderWidth: 38,
     colHeaders: true,
-    columnHeaderHeight: 52,
+    columnHeaderHeight: 62,
     fixedColumnsStart: 1,
     height: '100%',
     width: '100%',

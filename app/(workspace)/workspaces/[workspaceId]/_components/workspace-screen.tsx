@@ -6,6 +6,8 @@ import Link from 'next/link'
 import { useRouter } from 'next/navigation'
 import { useState } from 'react'
 import type { FormEvent } from 'react'
+import { TopBar } from '@/components/layout/top-bar'
+import { Button } from '@/components/ui/button'
 import type { Answer } from '@/lib/auth/server/current'
 import type { OpenedWorkspace } from '@/lib/workspace/server/open-workspace'
 import type * as workspaceActions from '../actions'
@@ -32,39 +34,56 @@ function useAction<Input, Output>(action: (input: Input) => Promise<Answer<Outpu
 export function WorkspaceScreen({ workspace, me, actions }: WorkspaceScreenProps) {
   const createProject = useAction(actions.createProject)
   return (
-    <main>
-      <header>
-        <h1>{workspace.name}</h1>
-        <p>
-          {me.name}, {workspace.role}
-        </p>
-        <button type="button" onClick={() => void signOut({ callbackUrl: '/sign-in' })}>
-          Sign out
-        </button>
-      </header>
-      {workspace.projects.map((project) => (
-        <section key={project.id} id={project.id} aria-label={project.name}>
-          <h2>{project.name}</h2>
-          <ul>
-            {project.sheets.map((sheet) => (
-              <SheetItem key={sheet.id} sheet={sheet} can={workspace.can} actions={actions} />
-            ))}
-          </ul>
-          {project.sheets.length === 0 && <p>No sheet here yet.</p>}
-          {workspace.can.create && <NewSheet projectId={project.id} createSheet={actions.createSheet} />}
-        </section>
-      ))}
-      {workspace.projects.length === 0 && <p>No project here yet.</p>}
-      {workspace.can.create && (
-        <NameForm
-          label="New project"
-          submit="Add project"
-          error={createProject.error}
-          busy={createProject.isPending}
-          onName={(name) => createProject.mutateAsync({ workspaceId: workspace.workspaceId, name })}
-        />
-      )}
-    </main>
+    <>
+      <TopBar
+        title={workspace.name}
+        actions={
+          <>
+            <span className="hidden text-white/80 sm:inline">
+              {me.name}, {workspace.role}
+            </span>
+            <Button look="dark" onClick={() => void signOut({ callbackUrl: '/sign-in' })}>
+              Sign out
+            </Button>
+          </>
+        }
+      />
+      <main className="mx-auto flex max-w-4xl flex-col gap-6 px-4 py-6">
+        {workspace.projects.map((project) => (
+          <section key={project.id} id={project.id} aria-label={project.name}>
+            <h2 className="mb-2 text-base font-bold">{project.name}</h2>
+            <div className="overflow-hidden rounded-xl border border-line bg-white">
+              <ul>
+                {project.sheets.map((sheet) => (
+                  <SheetItem key={sheet.id} sheet={sheet} can={workspace.can} actions={actions} />
+                ))}
+              </ul>
+              {project.sheets.length === 0 && (
+                <p className="px-4 py-5 text-dim">
+                  No sheet here yet.
+                  {workspace.can.create && ' Name the first one below: a fill, a let-down, a leak test.'}
+                </p>
+              )}
+              {workspace.can.create && (
+                <div className="border-t border-line bg-[#F7F9F9] px-4 py-3">
+                  <NewSheet projectId={project.id} createSheet={actions.createSheet} />
+                </div>
+              )}
+            </div>
+          </section>
+        ))}
+        {workspace.projects.length === 0 && <p className="text-dim">No project here yet.</p>}
+        {workspace.can.create && (
+          <NameForm
+            label="New project"
+            submit="Add project"
+            error={createProject.error}
+            busy={createProject.isPending}
+            onName={(name) => createProject.mutateAsync({ workspaceId: workspace.workspaceId, name })}
+          />
+        )}
+      </main>
+    </>
   )
 }
 
@@ -80,15 +99,20 @@ function SheetItem({ sheet, can, actions }: SheetItemProps) {
   const rename = useAction(actions.renameSheet)
   const remove = useAction(actions.deleteSheet)
   return (
-    <li>
-      <Link href={`/sheets/${sheet.id}`}>{sheet.title}</Link>
-      <p>
-        Changed by {sheet.changedBy}, <time dateTime={sheet.changedAt.toISOString()}>{shownDate(sheet.changedAt)}</time>
-      </p>
+    <li className="flex flex-wrap items-center gap-x-3 gap-y-2 border-b border-line-light px-4 py-3 last:border-0">
+      <div className="min-w-0 flex-1 basis-60">
+        <Link href={`/sheets/${sheet.id}`} className="text-[15px] font-bold text-petrol-light hover:underline">
+          {sheet.title}
+        </Link>
+        <p className="text-[12.5px] text-dim">
+          Changed by {sheet.changedBy},{' '}
+          <time dateTime={sheet.changedAt.toISOString()}>{shownDate(sheet.changedAt)}</time>
+        </p>
+      </div>
       {can.rename && !renaming && (
-        <button type="button" onClick={() => setRenaming(true)}>
+        <Button small onClick={() => setRenaming(true)}>
           Rename
-        </button>
+        </Button>
       )}
       {renaming && (
         <NameForm
@@ -104,22 +128,26 @@ function SheetItem({ sheet, can, actions }: SheetItemProps) {
         />
       )}
       {can.delete && !deleting && (
-        <button type="button" onClick={() => setDeleting(true)}>
+        <Button small onClick={() => setDeleting(true)}>
           Delete
-        </button>
+        </Button>
       )}
       {deleting && (
-        <p>
+        <p className="flex flex-wrap items-center gap-2">
           Delete {sheet.title} for everyone?{' '}
-          <button type="button" disabled={remove.isPending} onClick={() => remove.mutate({ sheetId: sheet.id })}>
+          <Button small look="danger" disabled={remove.isPending} onClick={() => remove.mutate({ sheetId: sheet.id })}>
             Delete it
-          </button>
-          <button type="button" onClick={() => setDeleting(false)}>
+          </Button>
+          <Button small onClick={() => setDeleting(false)}>
             Keep it
-          </button>
+          </Button>
         </p>
       )}
-      {remove.error && <p role="alert">{remove.error.message}</p>}
+      {remove.error && (
+        <p role="alert" className="w-full font-semibold text-hot">
+          {remove.error.message}
+        </p>
+      )}
     </li>
   )
 }
@@ -166,15 +194,25 @@ function NameForm({ label, submit, initial = '', error, busy, onName }: NameForm
     )
   }
   return (
-    <form onSubmit={onSubmit}>
-      <label>
-        {label}
-        <input required maxLength={120} value={name} onChange={(event) => setName(event.target.value)} />
+    <form onSubmit={onSubmit} className="flex flex-wrap items-center gap-2">
+      <label className="flex min-w-0 flex-1 basis-64 items-center gap-2">
+        <span className="shrink-0 text-[13px] font-semibold">{label}</span>
+        <input
+          required
+          maxLength={120}
+          value={name}
+          onChange={(event) => setName(event.target.value)}
+          className="w-full min-w-0 rounded-md border border-line bg-white px-2.5 py-1.5"
+        />
       </label>
-      <button type="submit" disabled={busy}>
+      <Button type="submit" look="primary" disabled={busy}>
         {submit}
-      </button>
-      {error && <p role="alert">{error.message}</p>}
+      </Button>
+      {error && (
+        <p role="alert" className="w-full font-semibold text-hot">
+          {error.message}
+        </p>
+      )}
     </form>
   )
 }
