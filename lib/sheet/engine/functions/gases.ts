@@ -84,20 +84,20 @@ export const gasConstantFunctions: readonly FunctionSpec[] = [
     quantity: 'molar_mass',
     help: 'molar mass',
     of: (fluid) => fluid.info.molarMass_kg_mol,
-    example: { formula: 'molar_mass(nitrogen)', shown: '28.0135 g/mol' },
+    example: { formula: 'molar_mass(nitrogen)', shown: '28.013 g/mol' },
   }),
   constant({
     name: 'critical_temperature',
     quantity: 'temperature',
     help: 'critical temperature',
     of: (fluid) => fluid.info.critical?.T_K,
-    example: { formula: 'critical_temperature(carbon_dioxide)', shown: '' },
+    example: { formula: 'critical_temperature(carbon_dioxide)', shown: '30.978 °C' },
   }),
   constant({
     name: 'critical_pressure',
     quantity: 'pressure',
     help: 'critical pressure',
     of: (fluid) => fluid.info.critical?.p_Pa,
-    example: { formula: 'critical_pressure(carbon_dioxide)', shown: '' },
+    example: { formula: 'critical_pressure(carbon_dioxide)', shown: '73.773 bar' },
   }),
 ]

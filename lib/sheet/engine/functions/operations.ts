@@ -82,7 +82,7 @@ export const operationFunctions: readonly FunctionSpec[] = [
       numberParameter('shell_T', 'temperature', 'temperature of the shell, where it is not that of the gas', optional),
     ],
     help: 'a vessel as received; p: 0 bar is an evacuated one',
-    example: { formula: 'start(vessel(50 L), nitrogen, p: 5 bar, T: 18 °C).m', shown: '0.2894 kg' },
+    example: { formula: 'start(vessel(50 L), nitrogen, p: 5 bar, T: 18 °C).m', shown: '0.28966 kg' },
     run: (args, surroundings) => {
       const vessel = valueOf<RigVessel>(args, 'vessel')
       const fluid = args.gas === undefined ? vessel.gas : fluidOf(args)
@@ -114,7 +114,7 @@ export const operationFunctions: readonly FunctionSpec[] = [
     example: {
       formula:
         'charge(from: start(vessel(50 L), nitrogen, p: 5 bar, T: 18 °C), supply: header(nitrogen, p: 300 bar, T: 15 °C), until_p: 200 bar).T',
-      shown: '',
+      shown: '106.73 °C',
     },
     run: (args) =>
       charge({
@@ -144,7 +144,7 @@ export const operationFunctions: readonly FunctionSpec[] = [
     help: 'gas flows out until a stop is reached',
     example: {
       formula: 'vent(from: start(vessel(50 L), nitrogen, p: 200 bar, T: 18 °C), until_p: 20 bar).T',
-      shown: '',
+      shown: '−126.54 °C',
     },
     run: (args, surroundings) =>
       vent({
@@ -163,7 +163,10 @@ export const operationFunctions: readonly FunctionSpec[] = [
       ...STOPS.filter((stop) => stop.name !== 'until_m'),
     ],
     help: 'closed, while heat passes between gas, shell and surroundings',
-    example: { formula: 'hold(from: start(vessel(50 L), nitrogen, p: 200 bar, T: 80 °C), to_T: 18 °C).p', shown: '' },
+    example: {
+      formula: 'hold(from: start(vessel(50 L), nitrogen, p: 200 bar, T: 80 °C), to_T: 18 °C).p',
+      shown: '155.66 bar',
+    },
     run: (args) =>
       hold({ from: valueOf<Run>(args, 'from'), to_T_K: optionalNumber(args, 'to_T'), stops: stopsOf(args) }),
   }),
