@@ -9,9 +9,27 @@ export {
   sameDimension,
   type Dimension,
 } from './dimension'
-export { QUANTITIES, isQuantity, quantity, quantityOf, unitOf, type Quantity, type QuantityScale } from './quantities'
+export {
+  QUANTITIES,
+  columnUnit,
+  isQuantity,
+  isUnitOf,
+  quantity,
+  quantityOf,
+  unitOf,
+  type Quantity,
+  type QuantityScale,
+} from './quantities'
 export { readUnit, type Unit } from './unit'
 export { fromSI, toSI } from './convert'
-export { formulaOf, readQuantity, type Reading, type ReadingContext } from './read'
+export {
+  belowZero,
+  formulaOf,
+  readQuantity,
+  unitInFormula,
+  unknownUnit,
+  type Reading,
+  type ReadingContext,
+} from './read'
 export { formatNumber, formatQuantity, type Formatting } from './format'
 export { dimensionWords } from './words'

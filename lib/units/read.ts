@@ -1,6 +1,5 @@
-import { sameDimension } from './dimension'
 import { toSI } from './convert'
-import { quantity as quantityById, unitOf } from './quantities'
+import { columnUnit, isQuantity, isUnitOf, quantity as quantityById, QUANTITIES } from './quantities'
 import { readUnit } from './unit'
 import type { Unit } from './unit'
 import { dimensionWords } from './words'
@@ -22,48 +21,76 @@ export type Reading =
     }
   | { readonly ok: false; readonly reason: string }
 
-const NUMBER = String.raw`[+\-−–]?(?:\d+(?:\.\d*)?|\.\d+)(?:[eE][+\-−]?\d+)?`
-const FRACTION = String.raw`[+\-−–]?(?:\d+[ \u00a0-])?\d+/\d+`
-const READING = new RegExp(`^(${FRACTION}|${NUMBER})\\s*(.*)$`, 'su')
+const MINUS = '[-−–]'
+/** Digits, in threes or not; the spaces are gone before a number is made of it. */
+const DIGITS = String.raw`\d{1,3}(?: \d{3})+(?!\d)|\d+`
+const NUMBER = String.raw`(?:(?:${DIGITS})(?:\.\d*)?|\.\d+)(?:[eE](?:\+|${MINUS})?\d+)?`
+const FRACTION = String.raw`(?:\d+ )?\d+\/\d+(?![\d.])`
+const READING = new RegExp(`^((?:\\+|${MINUS})? ?)(${FRACTION}|${NUMBER})(.*)$`, 'su')
 
 /**
  * Reads what a person types into a cell: `200 bar`, `15 °C`, `3/8 in`, `1 1/2 in`, `72 °F`, or a plain number in the
  * column's unit. Spaces part thousands; a comma is refused, since it parts thousands in one country and decimals in another.
  */
 export function readQuantity(text: string, context: ReadingContext): Reading {
+  if (!isQuantity(context.quantity)) return refused('this column takes no number')
   const wanted = quantityById(context.quantity)
-  const trimmed = text.trim().replaceAll('\u2009', ' ').replaceAll('\u202f', ' ')
-  const joined = trimmed.replace(/(\d) (?=\d{3}(?!\d))/g, '$1')
-  const match = READING.exec(joined)
-  if (!match) return { ok: false, reason: `“${text}” is no number` }
-  const [, number, unitText] = match
-  if (unitText.startsWith(','))
-    return { ok: false, reason: 'write decimals with a point: 1.5; a comma can be read two ways' }
-  const value = numberOf(number)
-  if (!Number.isFinite(value)) return { ok: false, reason: `“${number}” is no number that can be worked with` }
-  const unit = unitText === '' ? defaultUnit(context.unit) : readUnit(unitText)
-  if (!unit) return { ok: false, reason: `no unit is called “${unitText}”` }
-  const kelvinFor = wanted.scale === 'difference' && unit.offset !== 0
-  if (!sameDimension(unit.dimension, wanted.dimension) || kelvinFor) {
-    return { ok: false, reason: `${unit.text} is ${dimensionWords(unit.dimension)}, here a ${wanted.label} is needed` }
+  const match = READING.exec(text.trim().replace(/[\u00a0\u2009\u202f]/g, ' '))
+  if (!match) return refused(`“${shorten(text.trim())}” is no number`)
+  const [, sign, digits, rest] = match
+  const unitText = rest.trim()
+  if (/^,\d/.test(unitText))
+    return refused('write decimals with a point, 1.5, and thousands with none: a comma is read two ways')
+  const value = numberOf(digits) * (/^[-−–]/.test(sign) ? -1 : 1)
+  if (!Number.isFinite(value)) return refused(`${shorten(digits)} is no number that can be worked with`)
+  const unit = unitText === '' ? columnUnit(context) : readUnit(unbracketed(unitText))
+  if (!unit) return refused(unknownUnit(unitText))
+  if (!isUnitOf(unit, wanted)) {
+    const is = dimensionWords(unit.dimension, unit.offset !== 0 || unit.gauge ? 'point' : undefined)
+    return refused(`${unit.text} is for ${is}, here ${dimensionWords(wanted.dimension, wanted.scale)} is needed`)
   }
-  return { ok: true, si: toSI(value, unit, context.ambient_Pa), formula: formulaOf(value, unit) }
+  const si = toSI(value, unit, context.ambient_Pa)
+  const below = belowZero(si, value, unit)
+  return below ? refused(below) : { ok: true, si, formula: formulaOf(value, unit) }
 }
 
-const defaultUnit = (text: string): Unit => (text === '' ? unitOf('1') : unitOf(text))
+const refused = (reason: string): Reading => ({ ok: false, reason })
+const shorten = (text: string) => (text.length > 30 ? `${text.slice(0, 30)}…` : text)
+const unbracketed = (text: string) => /^\[(.*)\]$/s.exec(text)?.[1] ?? text
 
 function numberOf(text: string): number {
-  const plain = text.replace(/[−–]/g, '-')
-  const fraction = /^([+-]?)(?:(\d+)[ \u00a0-])?(\d+)\/(\d+)$/.exec(plain)
-  if (!fraction) return Number(plain)
-  const [, sign, whole = '0', over, under] = fraction
-  return (sign === '-' ? -1 : 1) * (Number(whole) + Number(over) / Number(under))
+  const fraction = /^(?:(\d+) )?(\d+)\/(\d+)$/.exec(text)
+  if (!fraction) return Number(text.replaceAll(' ', '').replace(/[−–]/g, '-'))
+  const [, whole = '0', over, under] = fraction
+  return Number(whole) + Number(over) / Number(under)
 }
+
+/** Why a reading on a scale cannot be: it lies below absolute zero, or below vacuum. Null where it can. */
+export function belowZero(si: number, value: number, unit: Unit): string | null {
+  if (si >= 0 || (unit.offset === 0 && !unit.gauge)) return null
+  return `${value} ${unit.text}`.replace('-', '−') + (unit.gauge ? ' is below vacuum' : ' is below absolute zero')
+}
+
+/** What to say of a unit that is none: most have been meant for something. */
+export function unknownUnit(text: string): string {
+  const said = `no unit is called “${shorten(text)}”`
+  const [over, ...under] = text.split('/')
+  const bracketed = `${over.trim()}/(${under.join('/').trim()})`
+  if (under.length === 1 && readUnit(bracketed)) return `${said}: is ${readUnit(bracketed)!.text} meant?`
+  const kelvin = text.replace(/°[CF]|℃|℉/g, 'K')
+  if (kelvin !== text && readUnit(kelvin)) return `${said}: per degree is written per K, ${readUnit(kelvin)!.text}`
+  const alike = MENU_UNITS.filter((unit) => unit.toLowerCase() === text.toLowerCase())
+  return alike.length > 0 ? `${said}: is ${alike.join(' or ')} meant?` : said
+}
+
+const MENU_UNITS = [...new Set(QUANTITIES.flatMap((quantity) => quantity.units))]
 
 /** A number with its unit, as the formula language writes it: compound units in brackets. */
 export function formulaOf(value: number, unit: Unit): string {
   if (unit.text === '1') return String(value)
-  const simple = /^[\p{L}°µ]+(\(g\))?$/u.test(unit.text)
-  if (unit.text === '%') return `${value} %`
-  return simple ? `${value} ${unit.text}` : `${value} [${unit.text}]`
+  return `${value} ${unitInFormula(unit.text)}`
 }
+
+/** A unit behind a number in a formula: `bar(g)`, `[W/(m² K)]`. */
+export const unitInFormula = (text: string): string =>
+  /^[°\p{L}][°²³\p{L}]*(\(g\))?$|^%$/u.test(text) ? text : `[${text}]`

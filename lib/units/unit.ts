@@ -1,189 +1,80 @@
+import { PRESSURE, findAtom, fraction } from './atoms'
 import { DIMENSIONLESS, divide, multiply, power } from './dimension'
 import type { Dimension } from './dimension'
-import { FACTORS } from './unitsnet'
 
-/** A unit: an SI value is (number · factor) + offset, a gauge one counts from the ambient pressure besides. */
+/** A unit: a reading is (number + offset) · factor / divisor in SI, a gauge one counts from the ambient pressure besides. */
 export interface Unit {
-  /** As it is shown: `kJ/(kg K)`. */
+  /** As it is shown: `kJ/(kg K)`. Reading it gives this unit again. */
   readonly text: string
   readonly dimension: Dimension
   readonly factor: number
-  /** Of a scale whose zero is not that of the quantity: 273.15 for °C. */
+  readonly divisor: number
+  /** Of a scale whose zero is not that of the quantity, in the unit itself: 273.15 for °C. */
   readonly offset: number
   readonly gauge: boolean
 }
 
-interface Atom {
-  readonly dimension: Dimension
-  readonly factor: number
-  readonly offset?: number
-  readonly prefixes?: boolean
-}
+/** Kindnesses; `bar(g)` is the one spelling of a gauge unit that is shown. */
+const GAUGE_SPELLINGS: ReadonlyMap<string, string> = new Map([
+  ['barg', 'bar'],
+  ['mbarg', 'mbar'],
+  ['psig', 'psi'],
+  ['PSIG', 'psi'],
+  ['kPag', 'kPa'],
+  ['MPag', 'MPa'],
+])
+const ABSOLUTE_SPELLINGS: ReadonlyMap<string, string> = new Map([
+  ['bara', 'bar'],
+  ['psia', 'psi'],
+  ['PSIA', 'psi'],
+])
 
-const D = {
-  mass: [1, 0, 0, 0, 0],
-  length: [0, 1, 0, 0, 0],
-  time: [0, 0, 1, 0, 0],
-  temperature: [0, 0, 0, 1, 0],
-  amount: [0, 0, 0, 0, 1],
-  volume: [0, 3, 0, 0, 0],
-  force: [1, 1, -2, 0, 0],
-  pressure: [1, -1, -2, 0, 0],
-  energy: [1, 2, -2, 0, 0],
-  power: [1, 2, -3, 0, 0],
-  frequency: [0, 0, -1, 0, 0],
-} as const satisfies Record<string, Dimension>
-
-const si = (dimension: Dimension, factor = 1): Atom => ({ dimension, factor, prefixes: true })
-const other = (dimension: Dimension, name: string, prefixes = false): Atom => ({
-  dimension,
-  factor: FACTORS[name],
-  prefixes,
-})
-
-/** Units that others are made of. Those marked take the SI prefixes. */
-const ATOMS: Readonly<Record<string, Atom>> = {
-  m: si(D.length),
-  g: si(D.mass, 1e-3),
-  s: si(D.time),
-  K: si(D.temperature),
-  mol: si(D.amount),
-  N: si(D.force),
-  Pa: si(D.pressure),
-  J: si(D.energy),
-  W: si(D.power),
-  Hz: si(D.frequency),
-  bar: other(D.pressure, 'bar', true),
-  L: other(D.volume, 'L', true),
-  P: si([1, -1, -1, 0, 0], 0.1),
-  cal: other(D.energy, 'cal', true),
-  t: other(D.mass, 't'),
-  in: other(D.length, 'in'),
-  ft: other(D.length, 'ft'),
-  lb: other(D.mass, 'lb'),
-  oz: other(D.mass, 'oz'),
-  min: other(D.time, 'min'),
-  h: other(D.time, 'h'),
-  d: other(D.time, 'd'),
-  atm: other(D.pressure, 'atm'),
-  psi: other(D.pressure, 'psi'),
-  torr: other(D.pressure, 'torr'),
-  mmHg: other(D.pressure, 'mmHg'),
-  inHg: other(D.pressure, 'inHg'),
-  gal: other(D.volume, 'gal'),
-  kgf: other(D.force, 'kgf'),
-  lbf: other(D.force, 'lbf'),
-  Btu: other(D.energy, 'Btu'),
-  hp: other(D.power, 'hp'),
-  '°C': { dimension: D.temperature, factor: 1, offset: 273.15 },
-  '°F': { dimension: D.temperature, factor: 5 / 9, offset: 459.67 * (5 / 9) },
-  '°R': { dimension: D.temperature, factor: 5 / 9 },
-  '%': other(DIMENSIONLESS, 'percent'),
-  ppm: other(DIMENSIONLESS, 'ppm'),
-}
-
-/** Other spellings that people type. */
-const SPELLINGS: Readonly<Record<string, string>> = {
-  l: 'L',
-  ml: 'mL',
-  degC: '°C',
-  degF: '°F',
-  '℃': '°C',
-  '℉': '°F',
-  sec: 's',
-  hr: 'h',
-  day: 'd',
-  days: 'd',
-  inch: 'in',
-  lbs: 'lb',
-  Torr: 'torr',
-  BTU: 'Btu',
-  '”': 'in',
-}
-
-/** Kindnesses for gauge units; `bar(g)` is the one spelling that is shown. */
-const GAUGE_SPELLINGS: Readonly<Record<string, string>> = {
-  barg: 'bar',
-  psig: 'psi',
-  kPag: 'kPa',
-  MPag: 'MPa',
-  mbarg: 'mbar',
-}
-const ABSOLUTE_SPELLINGS: Readonly<Record<string, string>> = { bara: 'bar', psia: 'psi' }
-
-const PREFIXES: Readonly<Record<string, number>> = {
-  n: 1e-9,
-  µ: 1e-6,
-  μ: 1e-6,
-  u: 1e-6,
-  m: 1e-3,
-  c: 1e-2,
-  d: 1e-1,
-  h: 1e2,
-  k: 1e3,
-  M: 1e6,
-  G: 1e9,
-}
-
-function atom(name: string): Atom | null {
-  const known = SPELLINGS[name] ?? name
-  if (Object.hasOwn(ATOMS, known)) return ATOMS[known]
-  const prefix = PREFIXES[known[0]]
-  const rest = known.slice(1)
-  const base = Object.hasOwn(ATOMS, SPELLINGS[rest] ?? rest) ? ATOMS[SPELLINGS[rest] ?? rest] : null
-  // a factor below one is divided by its reciprocal: 1e-3 is not exact in binary, 1/1000 is rounded once
-  return prefix !== undefined && base?.prefixes ? { ...base, factor: scale(base.factor, prefix) } : null
-}
-
-const scale = (factor: number, prefix: number) => (prefix < 1 ? factor / Math.round(1 / prefix) : factor * prefix)
-
-const cache = new Map<string, Unit | null>()
-const CACHE_LIMIT = 2_000
 const LONGEST = 60
+const CACHE_LIMIT = 2_000
+const cache = new Map<string, Unit | null>()
 
 /** Reads a unit, simple or compound: `bar`, `°C`, `bar(g)`, `W/(m^2 K)`, `kg/m³`. Null where it is none. */
 export function readUnit(text: string): Unit | null {
-  const trimmed = text.trim()
-  let unit = cache.get(trimmed)
+  if (text.length > LONGEST) return null
+  let unit = cache.get(text)
   if (unit === undefined) {
-    unit = trimmed.length > LONGEST ? null : (simpleUnit(trimmed) ?? compoundUnit(trimmed))
+    const tidy = text.trim().replace(/([°º˚])\s+(?=[CFR]$)/, '$1')
+    // kg(g) is no kilogram times gram: what looks like a gauge unit is one, or none
+    unit = simpleUnit(tidy) ?? (/\p{L}\s?\([ga]\)$/u.test(tidy) ? null : compoundUnit(tidy))
     if (cache.size >= CACHE_LIMIT) cache.clear()
-    cache.set(trimmed, unit)
+    cache.set(text, unit)
   }
   return unit
 }
 
+export const PLAIN: Unit = { text: '1', dimension: DIMENSIONLESS, factor: 1, divisor: 1, offset: 0, gauge: false }
+
 function simpleUnit(text: string): Unit | null {
-  const gauge = /^(.+)\(g\)$/.exec(text)?.[1] ?? GAUGE_SPELLINGS[text]
-  const name = gauge ?? /^(.+)\(a\)$/.exec(text)?.[1] ?? ABSOLUTE_SPELLINGS[text] ?? text
-  const found = atom(name)
+  const gauge = /^(.+?)\s?\(g\)$/.exec(text)?.[1] ?? GAUGE_SPELLINGS.get(text)
+  const absolute = /^(.+?)\s?\(a\)$/.exec(text)?.[1] ?? ABSOLUTE_SPELLINGS.get(text)
+  const found = findAtom(gauge ?? absolute ?? text)
   if (!found) return null
-  if ((gauge !== undefined || name !== text) && found.dimension !== D.pressure) return null
-  const shown = prettyName(name)
-  return {
-    text: gauge === undefined ? shown : `${shown}(g)`,
-    dimension: found.dimension,
-    factor: found.factor,
-    offset: found.offset ?? 0,
-    gauge: gauge !== undefined,
-  }
+  if ((gauge ?? absolute) !== undefined && found.dimension !== PRESSURE) return null
+  const { dimension, factor, divisor, offset } = found
+  const shown = gauge === undefined ? found.text : `${found.text}(g)`
+  return { text: shown, dimension, factor, divisor, offset, gauge: gauge !== undefined }
 }
 
-const prettyName = (name: string) => (SPELLINGS[name] ?? name).replace(/^[uμ](?=\p{L})/u, 'µ')
+const TOKEN = /[\p{L}°º˚%]+|\^?[-−⁻]?[\d⁰¹²³⁴⁵⁶⁷⁸⁹]+|\S/gu
+const EXPONENT = /^\^?[-−⁻]?[\d⁰¹²³⁴⁵⁶⁷⁸⁹]+$/
+const HIGHEST_POWER = 9
 
-const SUPERSCRIPT_DIGITS = '⁰¹²³⁴⁵⁶⁷⁸⁹'
-
-/** Products and quotients of simple units: terms side by side, `·`, `*`, `/`, brackets, powers as `^2`, `²` or `m2`. */
+/** Products and quotients of simple units: terms side by side, `·`, `*`, `/`, brackets, powers as `^2`, `²`, `m2` or `s-2`. */
 function compoundUnit(text: string): Unit | null {
-  const tokens = text.match(/[\p{L}°%]+|\^?[-−⁻]?[\d⁰¹²³⁴⁵⁶⁷⁸⁹]+|[/·*()]|\S/gu) ?? []
+  const tokens = text.match(TOKEN) ?? []
   let at = 0
 
   const quotient = (): Unit | null => {
     let left = product()
     while (left && tokens[at] === '/') {
       at++
-      const right = factor()
-      left = right && join(left, right, -1)
+      // one factor only: what J/kg K means is a matter of opinion, so that brackets are asked for
+      left = joined(left, '/', factor())
     }
     return left
   }
@@ -191,62 +82,72 @@ function compoundUnit(text: string): Unit | null {
     let left = factor()
     while (left && at < tokens.length && tokens[at] !== '/' && tokens[at] !== ')') {
       if (tokens[at] === '·' || tokens[at] === '*') at++
-      const right = factor()
-      left = right && join(left, right, 1)
+      left = joined(left, ' ', factor())
     }
     return left
   }
   const factor = (): Unit | null => {
     const token = tokens[at++]
     if (token === undefined) return null
-    let unit: Unit | null
-    if (token === '(') {
-      unit = quotient()
-      if (tokens[at++] !== ')') return null
-    } else if (token === '1') {
-      return ONE
-    } else {
-      const found = atom(token)
-      // a scale with an offset of its own means nothing inside a product: J/(kg °C) is read as per kelvin by nobody's guess
-      unit =
-        found && !found.offset
-          ? { text: prettyName(token), dimension: found.dimension, factor: found.factor, offset: 0, gauge: false }
-          : null
-    }
-    const exponent = unit && exponentOf(tokens[at])
-    if (unit && exponent !== null) {
-      at++
-      return { ...unit, dimension: power(unit.dimension, exponent), factor: unit.factor ** exponent }
-    }
-    return unit
+    if (token === '1') return PLAIN
+    const base = token === '(' ? group() : term(token)
+    const exponent = base && exponentOf(tokens[at])
+    if (!base || exponent === null) return base
+    at++
+    return raised(base, exponent)
+  }
+  const group = (): Unit | null => {
+    const inside = quotient()
+    return tokens[at++] === ')' && inside ? { ...inside, text: `(${inside.text})` } : null
   }
 
   const unit = quotient()
-  return unit && at === tokens.length ? { ...unit, text: prettyText(text) } : null
+  return unit && at === tokens.length ? { ...unit, ...fraction(unit.factor, unit.divisor) } : null
 }
 
-const ONE: Unit = { text: '1', dimension: DIMENSIONLESS, factor: 1, offset: 0, gauge: false }
-
-function join(a: Unit, b: Unit, sign: 1 | -1): Unit {
-  const dimension = sign === 1 ? multiply(a.dimension, b.dimension) : divide(a.dimension, b.dimension)
-  return { ...ONE, dimension, factor: sign === 1 ? a.factor * b.factor : a.factor / b.factor }
+/** A scale with a zero of its own means nothing inside a product: nobody knows whether J/(kg °C) is meant per kelvin. */
+function term(word: string): Unit | null {
+  const found = findAtom(word)
+  if (!found || found.offset !== 0) return null
+  const { text, dimension, factor, divisor } = found
+  return { text, dimension, factor, divisor, offset: 0, gauge: false }
 }
+
+function joined(a: Unit, sign: ' ' | '/', b: Unit | null): Unit | null {
+  if (!b) return null
+  const over = sign === '/'
+  return {
+    ...PLAIN,
+    text: `${a.text}${sign}${b.text}`,
+    dimension: over ? divide(a.dimension, b.dimension) : multiply(a.dimension, b.dimension),
+    factor: a.factor * (over ? b.divisor : b.factor),
+    divisor: a.divisor * (over ? b.factor : b.divisor),
+  }
+}
+
+function raised(base: Unit, exponent: number): Unit {
+  const [factor, divisor] = exponent < 0 ? [base.divisor, base.factor] : [base.factor, base.divisor]
+  const size = Math.abs(exponent)
+  return {
+    ...PLAIN,
+    text: `${base.text}${superscript(exponent)}`,
+    dimension: power(base.dimension, exponent),
+    factor: factor ** size,
+    divisor: divisor ** size,
+  }
+}
+
+const SUPERSCRIPT_DIGITS = '⁰¹²³⁴⁵⁶⁷⁸⁹'
+
+const superscript = (exponent: number) =>
+  `${exponent < 0 ? '⁻' : ''}${[...String(Math.abs(exponent))].map((digit) => SUPERSCRIPT_DIGITS[Number(digit)]).join('')}`
 
 function exponentOf(token: string | undefined): number | null {
-  if (token === undefined || !/^\^?[-−⁻]?[\d⁰¹²³⁴⁵⁶⁷⁸⁹]+$/.test(token)) return null
-  const digits = [...token.replace(/^\^/, '').replace(/[−⁻]/, '-')].map((digit) => {
-    const superscript = SUPERSCRIPT_DIGITS.indexOf(digit)
-    return superscript < 0 ? digit : String(superscript)
+  if (token === undefined || !EXPONENT.test(token)) return null
+  const digits = [...token.replace('^', '').replace(/[−⁻]/, '-')].map((digit) => {
+    const raised = SUPERSCRIPT_DIGITS.indexOf(digit)
+    return raised < 0 ? digit : String(raised)
   })
   const exponent = Number(digits.join(''))
-  return Math.abs(exponent) <= 9 ? exponent : null
-}
-
-/** `W/(m^2 K)` is shown as `W/(m² K)`, `m3` as `m³`. */
-function prettyText(text: string): string {
-  return text
-    .replace(/\^?(?<=[\p{L}^)])\^?(\d)/gu, (_, digit: string) => SUPERSCRIPT_DIGITS[Number(digit)])
-    .replace(/\s*[·*]\s*/g, ' ')
-    .replace(/\s+/g, ' ')
-    .replace(/(?<![\p{L}])[uμ](?=\p{L})/gu, 'µ')
+  return exponent !== 0 && Math.abs(exponent) <= HIGHEST_POWER ? exponent : null
 }

@@ -14,11 +14,14 @@ const BTU_J = 2326 * POUND_KG
 const EXACT: Readonly<Record<string, number>> = {
   psi: (POUND_KG * STANDARD_GRAVITY_M_S2) / INCH_M ** 2,
   lbf: POUND_KG * STANDARD_GRAVITY_M_S2,
-  // conventional mercury and water: 13 595.1 kg/m³ and 1 000 kg/m³ under standard gravity
+  // conventional columns: mercury of 13 595.1 kg/m³, water of 1 000 kg/m³, under standard gravity
   mmHg: 13.5951 * STANDARD_GRAVITY_M_S2,
   inHg: 13.5951 * STANDARD_GRAVITY_M_S2 * 25.4,
+  mmH2O: STANDARD_GRAVITY_M_S2,
+  inH2O: STANDARD_GRAVITY_M_S2 * 25.4,
   torr: 101_325 / 760,
   Btu: BTU_J,
+  // mechanical: 550 foot-pounds in a second
   hp: 550 * 0.3048 * POUND_KG * STANDARD_GRAVITY_M_S2,
 }
 
@@ -33,7 +36,7 @@ const factor = {
   ratio: (unit: UnitsNet.RatioUnits) => new UnitsNet.Ratio(1, unit).convert(UnitsNet.RatioUnits.DecimalFractions),
 }
 
-/** SI units in one unit, for every unit that is no SI unit itself. */
+/** How many SI units one unit is, for every unit that is neither of the SI nor a scale with a zero of its own. */
 export const FACTORS = {
   in: factor.length(UnitsNet.LengthUnits.Inches),
   ft: factor.length(UnitsNet.LengthUnits.Feet),
@@ -45,11 +48,10 @@ export const FACTORS = {
   d: factor.duration(UnitsNet.DurationUnits.Days),
   bar: factor.pressure(UnitsNet.PressureUnits.Bars),
   atm: factor.pressure(UnitsNet.PressureUnits.Atmospheres),
-  L: factor.volume(UnitsNet.VolumeUnits.Liters),
   gal: factor.volume(UnitsNet.VolumeUnits.UsGallons),
   cal: factor.energy(UnitsNet.EnergyUnits.Calories),
   kgf: factor.force(UnitsNet.ForceUnits.KilogramsForce),
-  percent: factor.ratio(UnitsNet.RatioUnits.Percent),
+  '%': factor.ratio(UnitsNet.RatioUnits.Percent),
   ppm: factor.ratio(UnitsNet.RatioUnits.PartsPerMillion),
   ...EXACT,
 } as Readonly<Record<string, number>>
