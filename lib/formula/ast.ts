@@ -13,7 +13,13 @@ export type RowAst =
 
 /** What a reference names: a name as people write it, or an identity as the document keeps it. */
 export type Target =
-  | { readonly by: 'name'; readonly name: string; readonly span: Span }
+  | {
+      readonly by: 'name'
+      readonly name: string
+      /** Written in brackets: then it is a name of the sheet's own, and no word of the language. */
+      readonly bracketed: boolean
+      readonly span: Span
+    }
   | { readonly by: 'identity'; readonly kind: 'column' | 'thing'; readonly id: string; readonly span: Span }
 
 export interface ArgumentAst {

@@ -1,8 +1,11 @@
+import { Problem } from '@/lib/errors'
 import type { Span } from '@/lib/errors'
-import { children } from './ast'
-import type { Ast, RowAst, Target } from './ast'
-import { meaningOf, written } from './names'
-import { parse } from './parse'
+import type { RowAst, Target } from './ast'
+import { bracketed, indexed, meaningOf, rowsLabelled, written } from './names'
+import { parser } from './parser'
+import { tooMuch } from './parse'
+import { referenceAst } from './reference-syntax'
+import type { ReferenceAst } from './reference-syntax'
 import type { Scope } from './types'
 
 /*
@@ -12,80 +15,136 @@ import type { Scope } from './types'
 
 /** From what a person wrote to what is kept. Names that mean nothing, or two things, stay as they are. */
 export function bind(text: string, scope: Scope): string {
-  return rewrite(
-    text,
-    (target) => identityOf(target, scope),
-    (row) => rowIdentity(row, scope),
-  )
+  const bound = applied(text, changes(text, binding(scope)))
+  // names are followed in a broken formula too, but not where that would break it in another place
+  return referencesIn(bound).length === referencesIn(text).length ? bound : text
 }
 
-/** From what is kept to today's names. What was deleted is shown as such, and bound again to the same identity. */
+/** From what is kept to today's names, such that binding them gives the same again. */
 export function show(text: string, scope: Scope): string {
-  return rewrite(
-    text,
-    (target) => nameOf(target, scope),
-    (row) => rowName(row, scope),
-  )
+  return applied(text, changes(text, showing(scope)))
 }
 
-function rewrite(
-  text: string,
-  forTarget: (target: Target) => string | null,
-  forRow: (row: RowAst) => string | null,
-): string {
-  const { ast } = parse(text)
-  if (!ast) return text
-  const changes: { span: Span; text: string }[] = []
-  const add = (span: Span, replacement: string | null) => {
-    if (replacement !== null) changes.push({ span, text: replacement })
+/** Where a stretch of a kept formula stands when that is shown. */
+export function shownSpan(text: string, span: Span, scope: Scope): Span {
+  const made = changes(text, showing(scope))
+  const moved = (place: number, end: boolean) =>
+    made.reduce((so, { span: { from, to }, text: put }) => {
+      if (place >= to) return so + put.length - (to - from)
+      return place > from ? so + (end ? put.length : 0) - (place - from) : so
+    }, place)
+  return { from: moved(span.from, false), to: moved(span.to, true) }
+}
+
+interface Renaming {
+  readonly target: (target: Target) => string | null
+  readonly row: (row: RowAst) => string | null
+}
+
+interface Change {
+  readonly span: Span
+  readonly text: string
+}
+
+/** What would be put where, in the order of the text. Names are found even in a formula that has a mistake elsewhere. */
+function changes(text: string, renaming: Renaming): readonly Change[] {
+  const found: Change[] = []
+  const put = (span: Span, replacement: string | null) => {
+    if (replacement === null || replacement === text.slice(span.from, span.to)) return
+    // in a broken formula something may stick to a name that would run into an identity
+    if (!/^[\p{L}\p{N}_]/u.test(text.slice(span.to))) found.push({ span, text: replacement })
   }
-  const walk = (node: Ast): void => {
-    if (node.type === 'reference') {
-      add(node.target.span, forTarget(node.target))
-      if (node.row) add(node.row.span, forRow(node.row))
+  for (const { target, row } of referencesIn(text)) {
+    put(target.span, renaming.target(target))
+    if (row) put(row.span, renaming.row(row))
+  }
+  return found
+}
+
+function referencesIn(text: string): readonly ReferenceAst[] {
+  if (tooMuch(text)) return []
+  const references: ReferenceAst[] = []
+  parser.parse(text).iterate({
+    enter: ({ name, node }) => {
+      if (name !== 'Reference' || node.getChild('⚠') || node.getChild('RowReference')?.getChild('⚠')) return
+      try {
+        references.push(referenceAst(node, text))
+      } catch (mistake) {
+        if (!(mistake instanceof Problem)) throw mistake
+      }
+    },
+  })
+  return references
+}
+
+function applied(text: string, made: readonly Change[]): string {
+  let done = ''
+  let from = 0
+  for (const change of made) {
+    done += text.slice(from, change.span.from) + change.text
+    from = change.span.to
+  }
+  return done + text.slice(from)
+}
+
+const isToken = (id: string) => /^[A-Za-z0-9_]+$/.test(id)
+
+const binding = (scope: Scope): Renaming => ({
+  target: (target) => {
+    if (target.by === 'identity') return token(target)
+    const meaning = meaningOf(target.name, target.bracketed, scope)
+    if (meaning.is !== 'column' && meaning.is !== 'thing') return null
+    return isToken(meaning.id) ? token({ kind: meaning.is, id: meaning.id }) : null
+  },
+  row: (row) => {
+    const id = rowIdentity(row, scope)
+    return id !== undefined && isToken(id) ? `@$r:${id}` : null
+  },
+})
+
+const token = ({ kind, id }: { readonly kind: 'column' | 'thing'; readonly id: string }) =>
+  `$${kind === 'column' ? 'c' : 't'}:${id}`
+
+function rowIdentity(row: RowAst, scope: Scope): string | undefined {
+  switch (row.at) {
+    case 'identity':
+      return row.id
+    case 'number':
+      return scope.rows[row.number - 1]?.id
+    case 'label': {
+      const labelled = rowsLabelled(row.label, scope)
+      return labelled.length === 1 ? labelled[0] : undefined
     }
-    children(node).forEach(walk)
+    default:
+      return undefined
   }
-  walk(ast)
-  changes.sort((a, b) => b.span.from - a.span.from)
-  return changes.reduce((so, change) => so.slice(0, change.span.from) + change.text + so.slice(change.span.to), text)
 }
 
-const DELETED = /^deleted (\$[ctr]:[A-Za-z0-9_-]+)$/
+const showing = (scope: Scope): Renaming => ({
+  target: (target) => {
+    if (target.by === 'name') return null
+    const { columns, things } = indexed(scope)
+    const name = target.kind === 'column' ? columns.get(target.id)?.symbol : things.get(target.id)?.name
+    if (name === undefined) return `[deleted ${token(target)}]`
+    const meaning = meaningOf(name, true, scope)
+    const leadsBack = meaning.is === target.kind && meaning.id === target.id && !HAS_TOKEN.test(name)
+    return leadsBack ? written(name, scope.words) : bracketed(`${name.trim() || 'unnamed'} ${token(target)}`)
+  },
+  row: (row) => {
+    if (row.at !== 'identity') return null
+    const place = indexed(scope).rows.get(row.id)
+    if (place === undefined) return `@[deleted $r:${row.id}]`
+    const { label } = scope.rows[place]
+    return isTelling(label, scope) ? `@${bracketed(label)}` : `@${place + 1}`
+  },
+})
 
-function identityOf(target: Target, scope: Scope): string | null {
-  if (target.by === 'identity') return null
-  const deleted = DELETED.exec(target.name)
-  if (deleted) return deleted[1]
-  const meaning = meaningOf(target.name, scope)
-  if (meaning.is === 'column') return `$c:${meaning.id}`
-  return meaning.is === 'thing' ? `$t:${meaning.id}` : null
-}
+const HAS_TOKEN = /\$[ctr]:/
+const LONGEST_LABEL = 40
 
-function nameOf(target: Target, scope: Scope): string | null {
-  if (target.by === 'name') return null
-  const { kind, id } = target
-  const name =
-    kind === 'column'
-      ? scope.columns.find((column) => column.id === id)?.symbol
-      : scope.things.find((thing) => thing.id === id)?.name
-  return name ? written(name) : `[deleted $${kind === 'column' ? 'c' : 't'}:${id}]`
-}
-
-function rowIdentity(row: RowAst, scope: Scope): string | null {
-  if (row.at === 'number') {
-    const found = scope.rows[row.number - 1]
-    return found ? `@$r:${found.id}` : null
-  }
-  if (row.at !== 'label') return null
-  const deleted = DELETED.exec(row.label)
-  if (deleted) return `@${deleted[1]}`
-  const named = scope.rows.filter((candidate) => candidate.label === row.label)
-  return named.length === 1 ? `@$r:${named[0].id}` : null
-}
-
-function rowName(row: RowAst, scope: Scope): string | null {
-  if (row.at !== 'identity') return null
-  const index = scope.rows.findIndex((candidate) => candidate.id === row.id)
-  return index < 0 ? `@[deleted $r:${row.id}]` : `@${index + 1}`
-}
+/** A label that leads to one row, and reads well within a formula. Any other row is shown by its number. */
+const isTelling = (label: string, scope: Scope) =>
+  rowsLabelled(label, scope).length === 1 &&
+  label.length <= LONGEST_LABEL &&
+  !/^\s*$|[\n\r]/.test(label) &&
+  !HAS_TOKEN.test(label)

@@ -4,7 +4,9 @@ import type { Ast, ArgumentAst } from './ast'
 import { compileNode, guarded } from './compile'
 import type { Compiled, Context, Frame } from './compile'
 import { parse } from './parse'
-import { fits, typeWords } from './typing'
+import { meaningOf } from './names'
+import { suggestion } from './nearest'
+import { TEXT, fits, typeWords } from './typing'
 import type { FunctionSpec, Parameter, Type, Value, Vocabulary } from './types'
 import { fault, isFault, isList } from './values'
 
@@ -13,9 +15,12 @@ type CallAst = Extract<Ast, { type: 'call' }>
 /** A call against the function table: which argument is which, of what type, and which go together. */
 export function compileCall(ast: CallAst, context: Context): Compiled {
   const spec = context.vocabulary.functions.get(ast.name.toLowerCase())
-  if (!spec) throw new Problem('name', `there is no function ${ast.name}`, ast.nameSpan)
+  if (!spec) {
+    const meant = suggestion(ast.name, context.vocabulary.functions.keys())
+    throw new Problem('name', `there is no function ${ast.name}${meant}`, ast.nameSpan)
+  }
   const given = assign(spec, ast, context)
-  const run = spec.lazy ? lazyRun(spec, given, ast.span) : eagerRun(spec, given, ast.span)
+  const run = spec.lazy ? lazyRun(spec, given, ast.span) : eagerRun(spec, given, context.vocabulary, ast.span)
   const words = `${spec.name}(…)`
   return { type: resultType(spec, given, ast.span), run, words, span: ast.span }
 }
@@ -42,7 +47,7 @@ function assign(spec: FunctionSpec, ast: CallAst, context: Context): Given {
     if (argument.name === null) next++
     given.set(parameter, [
       ...(before ?? []),
-      checked(compileNode(argument.value, context), parameter, spec, context.vocabulary),
+      checked(argumentNode(argument, parameter, spec, context), parameter, spec, context.vocabulary),
     ])
   }
   for (const parameter of spec.parameters) {
@@ -51,20 +56,17 @@ function assign(spec: FunctionSpec, ast: CallAst, context: Context): Given {
     else if (!parameter.optional)
       throw new Problem('argument', `${spec.name} needs ${parameter.name}: ${parameter.help}`, ast.span)
   }
-  const written = [...given.entries()].filter(([, args]) => args.some((argument) => argument.span !== NOWHERE))
-  together(
-    spec,
-    written.map(([parameter]) => parameter.name),
-    ast.span,
-  )
+  const names = [...given.entries()].filter(([, args]) => isWritten(args)).map(([parameter]) => parameter.name)
+  together(spec, names, ast.span)
   return given
 }
 
 function named(spec: FunctionSpec, { name, nameSpan }: ArgumentAst): Parameter {
   const parameter = spec.parameters.find((candidate) => candidate.name === name)
   if (parameter) return parameter
-  const known = spec.parameters.map((candidate) => candidate.name).join(', ')
-  throw new Problem('argument', `${spec.name} has no argument ${name}; it takes ${known}`, nameSpan!)
+  const known = spec.parameters.map((candidate) => candidate.name)
+  const meant = suggestion(name!, known) || (known.length > 0 ? `; it takes ${known.join(', ')}` : '')
+  throw new Problem('argument', `${spec.name} has no argument ${name}${meant}`, nameSpan!)
 }
 
 function tooMany(spec: FunctionSpec, argument: ArgumentAst): Problem {
@@ -72,6 +74,26 @@ function tooMany(spec: FunctionSpec, argument: ArgumentAst): Problem {
   const hint = byName.length > 0 ? `: name it, ${byName.slice(0, 6).join(', ')}${byName.length > 6 ? ' …' : ''}` : ''
   return new Problem('argument', `${spec.name} does not take this argument${hint}`, argument.value.span)
 }
+
+/** A bare word is a text where the table lists it as a choice: `draw: vapour`. */
+function argumentNode(
+  { value: ast }: ArgumentAst,
+  parameter: Parameter,
+  spec: FunctionSpec,
+  context: Context,
+): Compiled {
+  const { choices } = parameter
+  const bare = ast.type === 'reference' && ast.target.by === 'name' && !ast.row && !ast.target.bracketed
+  const word = bare ? ast.target.name : ast.type === 'text' ? ast.value : null
+  if (!choices || word === null) return compileNode(ast, context)
+  const choice = choices.find((candidate) => candidate.toLowerCase() === word.toLowerCase())
+  if (choice !== undefined) return { type: TEXT, run: () => choice, words: choice, span: ast.span }
+  if (bare && meaningOf(word, false, context.scope).is !== 'nothing') return compileNode(ast, context)
+  throw new Problem('argument', notAChoice(spec, parameter, word), ast.span)
+}
+
+const notAChoice = (spec: FunctionSpec, { name, choices = [] }: Parameter, word: string) =>
+  `${name} of ${spec.name} is one of ${choices.join(', ')}, not “${word}”`
 
 function checked(argument: Compiled, parameter: Parameter, spec: FunctionSpec, vocabulary: Vocabulary): Compiled {
   const wanted: readonly Type[] = Array.isArray(parameter.type) ? parameter.type : [parameter.type as Type]
@@ -98,6 +120,7 @@ function standIn(parameter: Parameter, vocabulary: Vocabulary): Compiled {
 }
 
 const NOWHERE: Span = { from: 0, to: 0 }
+const isWritten = (args: readonly Compiled[]) => args.every((argument) => argument.span !== NOWHERE)
 
 function together(spec: FunctionSpec, given: readonly string[], span: Span): void {
   try {
@@ -119,25 +142,52 @@ function resultType(spec: FunctionSpec, given: Given, span: Span): Type {
   }
 }
 
-function eagerRun(spec: FunctionSpec, given: Given, span: Span): Compiled['run'] {
-  const parameters = [...given.entries()]
+function eagerRun(spec: FunctionSpec, given: Given, vocabulary: Vocabulary, span: Span): Compiled['run'] {
+  const parameters = [...given.entries()].map(([parameter, args]) => ({
+    parameter,
+    args,
+    written: isWritten(args),
+    standIn: parameter.default === undefined ? null : standIn(parameter, vocabulary),
+  }))
   return (frame) => {
     const args: Record<string, Value> = {}
-    for (const [parameter, compiled] of parameters) {
-      const value = parameter.repeats ? gathered(compiled, frame, spec) : single(compiled[0], frame, parameter, spec)
+    const present: string[] = []
+    const empty: Compiled[] = []
+    for (const { parameter, args: compiled, written, standIn } of parameters) {
+      let value = parameter.repeats ? gathered(compiled, frame, spec) : single(compiled[0], frame, parameter, spec)
+      if (value === null) {
+        empty.push(compiled[0])
+        value = standIn?.run(frame) ?? null
+      } else if (written) present.push(parameter.name)
       if (value === null) continue
       if (isFault(value) && !spec.takesFaults) return value
       args[parameter.name] = value
     }
-    return guarded(() => spec.evaluate(args, frame.surroundings), span)
+    return guarded(() => {
+      if (empty.length > 0) stillTogether(spec, present, empty)
+      return spec.evaluate(args, frame.surroundings)
+    }, span)
   }
 }
 
-/** An empty cell counts as an argument that was left out, where it may be. */
+/** An empty cell counts as an argument that was left out; which may be left out depends on the others. */
+function stillTogether(spec: FunctionSpec, present: readonly string[], empty: readonly Compiled[]): void {
+  try {
+    spec.together?.(present)
+  } catch (mistake) {
+    if (!(mistake instanceof Problem)) throw mistake
+    const which = empty.map(({ words }) => words).join(' and ')
+    throw new Problem(mistake.code, `${mistake.reason}; ${which} ${empty.length > 1 ? 'are' : 'is'} empty`)
+  }
+}
+
 function single(argument: Compiled, frame: Frame, parameter: Parameter, spec: FunctionSpec): Value {
   const value = argument.run(frame)
-  if (value !== null || parameter.optional) return value
-  return fault('argument', `${spec.name} needs ${parameter.name}, but ${argument.words} is empty`, argument.span)
+  if (value === null && !parameter.optional && parameter.default === undefined)
+    return fault('argument', `${spec.name} needs ${parameter.name}, but ${argument.words} is empty`, argument.span)
+  if (typeof value === 'string' && parameter.choices && !parameter.choices.includes(value))
+    return fault('argument', notAChoice(spec, parameter, value), argument.span)
+  return value
 }
 
 /** Whole columns and single values in one list; empty cells are passed over. */
@@ -158,13 +208,14 @@ function gathered(args: readonly Compiled[], frame: Frame, spec: FunctionSpec): 
   return list
 }
 
+/** A lazy function is handed its arguments unworked, and sees for itself which are empty or have an error. */
 function lazyRun(spec: FunctionSpec, given: Given, span: Span): Compiled['run'] {
   const parameters = [...given.entries()]
   return (frame) => {
     const args: Record<string, () => Value> = {}
     for (const [parameter, compiled] of parameters) {
       if (parameter.repeats) throw new Error(`${spec.name}: a lazy function repeats no argument`)
-      args[parameter.name] = () => single(compiled[0], frame, parameter, spec)
+      args[parameter.name] = () => compiled[0].run(frame)
     }
     return guarded(() => spec.evaluateLazy!(args), span)
   }

@@ -1,12 +1,12 @@
 import { Problem } from '@/lib/errors'
 import type { Span } from '@/lib/errors'
-import { power, toSI } from '@/lib/units'
+import { belowZero, power, toSI } from '@/lib/units'
 import type { Ast, BinaryOperator } from './ast'
 import { compileCall } from './calls'
 import { compareValues, numericOperation } from './operators'
 import { parse } from './parse'
 import { compileReference } from './references'
-import { LOGICAL, NUMBER, TEXT, binaryType, fits, literalType, quantityType, typeWords } from './typing'
+import { LOGICAL, NUMBER, TEXT, binaryType, derived, fits, literalType, typeWords } from './typing'
 import type { QuantityType } from './typing'
 import type { Compilation, Fault, Read, Scope, Surroundings, Type, Value, Vocabulary } from './types'
 import { fault, isFault, isThing } from './values'
@@ -55,13 +55,7 @@ export function compile(
   const context: Context = { text, scope, vocabulary, reads: [] }
   try {
     const compiled = compileNode(ast, context)
-    const { expected, expectedWords = 'this place' } = expectation
-    if (expected && !fits(compiled.type, expected)) {
-      const [is, wants] = [typeWords(compiled.type, vocabulary), typeWords(expected, vocabulary)]
-      throw new Problem('dimension', `this is ${is}, but ${expectedWords} takes ${wants}`, ast.span)
-    }
-    if (compiled.type.kind === 'list')
-      throw new Problem('dimension', 'a whole column is no value: sum, min or max it', ast.span)
+    expect(compiled, expectation, vocabulary)
     return {
       ok: true,
       type: compiled.type,
@@ -73,6 +67,17 @@ export function compile(
     if (!(mistake instanceof Problem)) throw mistake
     return { ok: false, fault: fault(mistake.code, mistake.reason, mistake.span ?? ast.span) }
   }
+}
+
+function expect(
+  { type, span }: Compiled,
+  { expected, expectedWords = 'this place' }: Expectation,
+  vocabulary: Vocabulary,
+) {
+  if (type.kind === 'list') throw new Problem('dimension', 'a whole column is no value: sum, min or max it', span)
+  if (!expected || fits(type, expected)) return
+  const [is, wants] = [typeWords(type, vocabulary), typeWords(expected, vocabulary)]
+  throw new Problem('dimension', `this is ${is}, but ${expectedWords} takes ${wants}`, span)
 }
 
 const isLiteral = (ast: Ast) =>
@@ -94,13 +99,8 @@ export function compileNode(ast: Ast, context: Context): Compiled {
   switch (ast.type) {
     case 'number':
       return { type: NUMBER, run: () => ast.value, words, span }
-    case 'quantity': {
-      const { value, unit } = ast
-      const type = literalType(unit)
-      if (unit.gauge) return { type, run: ({ surroundings }) => toSI(value, unit, surroundings.p_Pa), words, span }
-      const si = toSI(value, unit, 0)
-      return { type, run: () => si, words, span }
-    }
+    case 'quantity':
+      return { ...reading(ast), words, span }
     case 'text':
       return { type: TEXT, run: () => ast.value, words, span }
     case 'reference':
@@ -124,6 +124,20 @@ export function compileNode(ast: Ast, context: Context): Compiled {
     case 'binary':
       return compileBinary(ast, context, words)
   }
+}
+
+/** A number with a unit. What a gauge reading comes to, and whether that can be, is known only where it is run. */
+function reading({ value, unit, span }: Extract<Ast, { type: 'quantity' }>): Pick<Compiled, 'type' | 'run'> {
+  const type = literalType(unit)
+  const at = (ambient_Pa: number): Value => {
+    const si = toSI(value, unit, ambient_Pa)
+    const below = belowZero(si, value, unit)
+    return below ? fault('range', below, span) : si
+  }
+  if (unit.gauge) return { type, run: ({ surroundings }) => at(surroundings.p_Pa) }
+  const si = at(0)
+  if (isFault(si)) throw new Problem(si.fault, si.reason, span)
+  return { type, run: () => si }
 }
 
 /** The value of an expression where one is needed: an empty cell will not do. */
@@ -250,6 +264,8 @@ function typeOfBinary(
   }
 }
 
+const HIGHEST_POWER = 99
+
 function powerType(base: Compiled & { readonly type: QuantityType }, exponentAst: Ast, exponent: Compiled): Type {
   if (!fits(exponent.type, NUMBER))
     throw new Problem('dimension', `${exponent.words} is no plain number: it cannot be an exponent`, exponent.span)
@@ -262,7 +278,10 @@ function powerType(base: Compiled & { readonly type: QuantityType }, exponentAst
       exponent.span,
     )
   }
-  return quantityType(power(base.type.dimension, value), 'ratio')
+  const dimension = power(base.type.dimension, value)
+  if (dimension.some((exponent) => Math.abs(exponent) > HIGHEST_POWER))
+    throw new Problem('dimension', `nothing is measured in such a power of ${base.words}`, exponent.span)
+  return derived(dimension)
 }
 
 function constantOf(ast: Ast): number | null {

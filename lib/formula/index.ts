@@ -1,8 +1,8 @@
 /** The formula language: reading, checking, making ready to run, and showing. It knows dimensions; fluids and vessels it meets only in the vocabulary it is handed. */
 export { parse, LONGEST_FORMULA, type Parsed } from './parse'
 export { print } from './print'
-export { bind, show } from './bind'
-export { written } from './names'
+export { bind, show, shownSpan } from './bind'
+export { reservedWords, written } from './names'
 export { compile, type Expectation } from './compile'
 export { commonType, fits, typeWords } from './typing'
 export { children, type Ast, type FormulaProblem } from './ast'

@@ -1,9 +1,10 @@
 import type { SyntaxNode } from '@lezer/common'
 import { Problem } from '@/lib/errors'
 import type { Span } from '@/lib/errors'
-import { readUnit } from '@/lib/units'
-import type { ArgumentAst, Ast, BinaryOperator, FormulaProblem, RowAst, Target } from './ast'
+import { readUnit, unitOf, unknownUnit } from '@/lib/units'
+import type { ArgumentAst, Ast, BinaryOperator, FormulaProblem } from './ast'
 import { parser } from './parser'
+import { referenceAst } from './reference-syntax'
 import { syntaxReason } from './syntax-reason'
 
 /** A formula longer than this is refused, so that every text gets its answer in bounded time. */
@@ -17,16 +18,9 @@ export type Parsed =
 
 /** Reads a formula. Never throws: what cannot be read is a problem with its place. */
 export function parse(text: string): Parsed {
-  if (text.length > LONGEST_FORMULA) {
-    return refused(
-      { from: 0, to: text.length },
-      `a formula may be ${LONGEST_FORMULA} characters long, this one has ${text.length}`,
-    )
-  }
-  if (text.trim() === '') return refused({ from: 0, to: text.length }, 'there is no formula')
-  const operators = text.match(/[+\-−–*×·/÷^&=<>≤≥≠%.@([]/g)?.length ?? 0
-  if (operators > MOST_OPERATORS)
-    return refused({ from: 0, to: text.length }, 'this formula has more parts than anybody can read')
+  const whole = { from: 0, to: text.length }
+  const reason = tooMuch(text) ?? (text.trim() === '' ? 'there is no formula' : null)
+  if (reason) return refused(whole, reason)
   const tree = parser.parse(text)
   let error: SyntaxNode | null = null
   tree.iterate({
@@ -37,15 +31,23 @@ export function parse(text: string): Parsed {
     },
   })
   if (error) {
-    const { span, reason } = syntaxReason(text, error)
-    return refused(span, reason)
+    const problem = syntaxReason(text, error)
+    return refused(problem.span, problem.reason)
   }
   try {
     return { ast: build(tree.topNode.firstChild!, { text, depth: 0 }), problem: null }
   } catch (mistake) {
     if (!(mistake instanceof Problem)) throw mistake
-    return refused(mistake.span ?? { from: 0, to: text.length }, mistake.reason)
+    return refused(mistake.span ?? whole, mistake.reason)
   }
+}
+
+/** Why a text is not even tried; null where it is. */
+export function tooMuch(text: string): string | null {
+  if (text.length > LONGEST_FORMULA)
+    return `a formula may be ${LONGEST_FORMULA} characters long, this one has ${text.length}`
+  const operators = text.replace(/"[^"]*"/g, '').match(/[+\-−–*×·/÷^&=<>≤≥≠%.@([]/g)?.length ?? 0
+  return operators > MOST_OPERATORS ? 'this formula has more parts than anybody can read' : null
 }
 
 const refused = (span: Span, reason: string): Parsed => ({ ast: null, problem: { span, reason } })
@@ -69,11 +71,11 @@ function build(node: SyntaxNode, source: Source): Ast {
     case 'Text':
       return { type: 'text', value: textOf(node, source).slice(1, -1).replaceAll('""', '"'), span }
     case 'Reference':
-      return reference(node, source)
+      return referenceAst(node, source.text)
     case 'Group':
       return build(node.firstChild!.nextSibling!, below)
     case 'Percent':
-      return { type: 'percent', of: build(node.firstChild!, below), span }
+      return percent(node, below)
     case 'Prefix':
       return prefix(node, below)
     case 'Binary':
@@ -111,10 +113,25 @@ function quantity(node: SyntaxNode, source: Source): Ast {
   const unitNode = number.nextSibling
   if (!unitNode) return { type: 'number', value, span }
   const written = textOf(unitNode, source)
-  const unitText = unitNode.name === 'Bracketed' ? written.slice(1, -1) : written
+  const inBrackets = unitNode.name === 'Bracketed'
+  const unitText = inBrackets ? written.slice(1, -1) : written
   const unit = readUnit(unitText)
-  if (!unit) throw new Problem('syntax', `no unit is called “${unitText}”`, spanOf(unitNode))
-  return { type: 'quantity', value, unit, span }
+  if (!unit) {
+    const hint = inBrackets ? '' : `; a product is written with a sign: ${textOf(number, source)} * ${unitText}`
+    throw new Problem('syntax', `${unknownUnit(unitText)}${hint}`, spanOf(unitNode))
+  }
+  return unit.text === '1' ? { type: 'number', value, span } : { type: 'quantity', value, unit, span }
+}
+
+const PERCENT = unitOf('%')
+
+/** `5 %` is a reading as `5 bar` is; behind anything else the sign divides by a hundred. */
+function percent(node: SyntaxNode, source: Source): Ast {
+  const operand = node.firstChild!
+  const of = build(operand, source)
+  return operand.name === 'Quantity' && of.type === 'number'
+    ? { type: 'quantity', value: of.value, unit: PERCENT, span: spanOf(node) }
+    : { type: 'percent', of, span: spanOf(node) }
 }
 
 function prefix(node: SyntaxNode, source: Source): Ast {
@@ -126,8 +143,8 @@ function prefix(node: SyntaxNode, source: Source): Ast {
   const of = build(operand, source)
   if (sign === '+') return of
   // -5 °C is a reading five below zero, not the negative of 278.15 K
-  if (operand.name === 'Quantity' && (of.type === 'quantity' || of.type === 'number'))
-    return { ...of, value: -of.value, span: spanOf(node) }
+  if (operand.name !== 'Group' && (of.type === 'quantity' || of.type === 'number'))
+    return { ...of, value: of.value === 0 ? 0 : -of.value, span: spanOf(node) }
   return { type: 'negative', of, span: spanOf(node) }
 }
 
@@ -157,44 +174,6 @@ function binary(node: SyntaxNode, source: Source): Ast {
     left = { type: 'binary', operator, left, right: build(step.lastChild!, source), span: spanOf(step) }
   }
   return left
-}
-
-function reference(node: SyntaxNode, source: Source): Ast {
-  const first = node.firstChild!
-  const rowNode = node.getChild('RowReference')
-  return { type: 'reference', target: target(first, source), row: rowNode && row(rowNode, source), span: spanOf(node) }
-}
-
-function target(node: SyntaxNode, source: Source): Target {
-  const span = spanOf(node)
-  const written = textOf(node, source)
-  if (node.name === 'Bracketed') return { by: 'name', name: written.slice(1, -1).trim(), span }
-  if (node.name !== 'Identity') return { by: 'name', name: written, span }
-  const kind = written[1]
-  if (kind === 'r') throw new Problem('syntax', 'a state cannot stand alone: it follows an @', span)
-  return { by: 'identity', kind: kind === 'c' ? 'column' : 'thing', id: written.slice(3), span }
-}
-
-function row(node: SyntaxNode, source: Source): RowAst {
-  const what = node.lastChild!
-  const span = spanOf(node)
-  const written = textOf(what, source)
-  switch (what.name) {
-    case 'Number':
-      return { at: 'number', number: Number(written), span }
-    case 'Bracketed':
-      return { at: 'label', label: written.slice(1, -1).trim(), span }
-    case 'Identity':
-      if (written[1] !== 'r') throw new Problem('syntax', 'only a state can follow an @', span)
-      return { at: 'identity', id: written.slice(3), span }
-    default:
-      if (written === 'from' || written === 'all') return { at: written, span }
-      throw new Problem(
-        'syntax',
-        `after @ stands from, all, a state’s number, or its label in brackets: @[${written}]`,
-        span,
-      )
-  }
 }
 
 function callArguments(node: SyntaxNode, source: Source): ArgumentAst[] {

@@ -1,6 +1,6 @@
 import { formulaOf } from '@/lib/units'
 import type { Ast, BinaryOperator, RowAst, Target } from './ast'
-import { written } from './names'
+import { bracketed } from './names'
 
 /** How tightly operators bind, loosest first, as in the grammar. */
 const BINDING: Readonly<Record<BinaryOperator, number>> = {
@@ -35,7 +35,8 @@ export function print(ast: Ast): string {
     case 'field':
       return `${operand(ast.of, 8)}.${ast.field}`
     case 'percent':
-      return `${operand(ast.of, 7)} %`
+      // a percent sign right behind a number is part of its reading
+      return ast.of.type === 'number' ? `(${print(ast.of)}) %` : `${operand(ast.of, 7)} %`
     case 'negative':
       // a sign right before a number is part of its reading
       return isNumeral(ast.of) ? `-(${print(ast.of)})` : `-${operand(ast.of, PREFIX + 2)}`
@@ -62,7 +63,7 @@ function bindingOf(ast: Ast): number {
     case 'number':
     case 'quantity':
       // a reading below zero begins with a sign, which a power or a percent sign would take for its own
-      return ast.value < 0 || Object.is(ast.value, -0) ? PREFIX : 9
+      return ast.value < 0 ? PREFIX : 9
     case 'percent':
       return 7
     default:
@@ -71,7 +72,7 @@ function bindingOf(ast: Ast): number {
 }
 
 function targetText(target: Target): string {
-  if (target.by === 'name') return written(target.name)
+  if (target.by === 'name') return target.bracketed ? bracketed(target.name) : target.name
   return `$${target.kind === 'column' ? 'c' : 't'}:${target.id}`
 }
 
@@ -83,7 +84,7 @@ function rowText(row: RowAst): string {
     case 'number':
       return `@${row.number}`
     case 'label':
-      return `@[${row.label}]`
+      return `@${bracketed(row.label)}`
     case 'identity':
       return `@$r:${row.id}`
   }

@@ -1,12 +1,13 @@
 import { Problem } from '@/lib/errors'
-import type { Ast, RowAst, Target } from './ast'
-import type { Compiled, Context } from './compile'
+import { readUnit } from '@/lib/units'
+import type { RowAst, Target } from './ast'
 import { show } from './bind'
-import { meaningOf } from './names'
-import type { Read, RowRef, Type, Value } from './types'
+import type { Compiled, Context } from './compile'
+import { indexed, meaningOf, rowsLabelled } from './names'
+import { suggestion } from './nearest'
+import type { ReferenceAst } from './reference-syntax'
+import type { Read, RowRef, Scope, Type, Value, Vocabulary } from './types'
 import { STARTS_FROM_NONE, fault, isFault } from './values'
-
-type ReferenceAst = Extract<Ast, { type: 'reference' }>
 
 /** A name: a column (of this row or another), a thing of the rig, or a word of the language. */
 export function compileReference(ast: ReferenceAst, context: Context): Compiled {
@@ -47,45 +48,54 @@ type Resolved =
   | { readonly is: 'column' | 'thing'; readonly id: string; readonly type: Type }
   | { readonly is: 'word'; readonly type: Type; readonly value: Value }
 
-function resolve(target: Target, { scope, vocabulary }: Context): Resolved {
-  if (target.by === 'identity') {
-    const { kind, id, span } = target
-    const list: readonly { id: string; type: Type }[] = kind === 'column' ? scope.columns : scope.things
-    const item = list.find((candidate) => candidate.id === id)
-    if (!item)
-      throw new Problem(
-        'deleted',
-        `the ${kind === 'column' ? 'column' : 'thing of the rig'} this formula read was deleted`,
-        span,
-      )
-    const name =
-      kind === 'column'
-        ? scope.columns.find((column) => column.id === id)!.symbol
-        : scope.things.find((thing) => thing.id === id)!.name
-    const meaning = meaningOf(name, scope)
-    if (meaning.is === 'ambiguous') throw new Problem('name', meaning.reason, span)
-    return { is: kind, id, type: item.type }
+function resolve(target: Target, context: Context): Resolved {
+  return target.by === 'identity' ? byIdentity(target, context.scope) : byName(target, context)
+}
+
+/** An identity is never in doubt, but a name that two share is shown to whoever checks the formula: it is refused too. */
+function byIdentity({ kind, id, span }: Extract<Target, { by: 'identity' }>, scope: Scope): Resolved {
+  const { columns, things } = indexed(scope)
+  const [type, name] =
+    kind === 'column' ? [columns.get(id)?.type, columns.get(id)?.symbol] : [things.get(id)?.type, things.get(id)?.name]
+  if (type === undefined || name === undefined) {
+    const what = kind === 'column' ? 'the column' : 'the thing of the rig'
+    throw new Problem('deleted', `${what} this formula read was deleted`, span)
   }
-  const meaning = meaningOf(target.name, scope)
+  const meaning = meaningOf(name, true, scope)
+  if (meaning.is === 'ambiguous') throw new Problem('name', meaning.reason, span)
+  return { is: kind, id, type }
+}
+
+function byName(target: Extract<Target, { by: 'name' }>, { scope, vocabulary }: Context): Resolved {
+  const { name, bracketed, span } = target
+  const meaning = meaningOf(name, bracketed, scope)
+  const { columns, things } = indexed(scope)
   switch (meaning.is) {
     case 'column':
-      return { is: 'column', id: meaning.id, type: scope.columns.find((column) => column.id === meaning.id)!.type }
+      return { is: 'column', id: meaning.id, type: columns.get(meaning.id)!.type }
     case 'thing':
-      return { is: 'thing', id: meaning.id, type: scope.things.find((thing) => thing.id === meaning.id)!.type }
+      return { is: 'thing', id: meaning.id, type: things.get(meaning.id)!.type }
     case 'ambiguous':
-      throw new Problem('name', meaning.reason, target.span)
-    case 'nothing': {
-      const word = vocabulary.words.get(target.name) ?? vocabulary.words.get(target.name.toLowerCase())
+      throw new Problem('name', meaning.reason, span)
+    default: {
+      const word = bracketed ? undefined : (vocabulary.words.get(name) ?? vocabulary.words.get(name.toLowerCase()))
       if (word) return { is: 'word', type: word.type, value: word.value }
-      if (/^deleted \$/.test(target.name))
-        throw new Problem('deleted', 'what this formula read was deleted', target.span)
-      throw new Problem(
-        'name',
-        `${target.name} is not known here: no column, no thing of the rig and no word of the language is called so`,
-        target.span,
-      )
+      throw new Problem('name', unknownName(name, scope, vocabulary), span)
     }
   }
+}
+
+function unknownName(name: string, scope: Scope, vocabulary: Vocabulary): string {
+  const unknown = `${name} is not known here`
+  if (vocabulary.functions.has(name.toLowerCase())) return `${unknown} without arguments: write ${name}(…)`
+  const known = [
+    ...scope.columns.map(({ symbol }) => symbol),
+    ...scope.things.map((thing) => thing.name),
+    ...vocabulary.words.keys(),
+  ]
+  const meant = suggestion(name, known)
+  if (!meant && readUnit(name)) return `${unknown}; a compound unit is written in brackets: 5 [kJ/kg]`
+  return `${unknown}: no column, no thing of the rig and no word of the language is called so${meant}`
 }
 
 function rowRef(row: RowAst | null, { scope }: Context): RowRef {
@@ -100,14 +110,14 @@ function rowRef(row: RowAst | null, { scope }: Context): RowRef {
       return { at: 'row', row: found.id }
     }
     case 'label': {
-      const named = scope.rows.filter((candidate) => candidate.label === row.label)
+      const named = rowsLabelled(row.label, scope)
       if (named.length > 1)
         throw new Problem('name', `${named.length} states are called “${row.label}”: name it by its number`, row.span)
       if (named.length === 0) throw new Problem('name', `no state is called “${row.label}”`, row.span)
-      return { at: 'row', row: named[0].id }
+      return { at: 'row', row: named[0] }
     }
     case 'identity':
-      if (!scope.rows.some((candidate) => candidate.id === row.id)) {
+      if (!indexed(scope).rows.has(row.id)) {
         throw new Problem('deleted', 'the state this formula read was deleted', row.span)
       }
       return { at: 'row', row: row.id }

@@ -64,6 +64,8 @@ export interface Parameter {
   readonly named?: boolean
   /** The last parameter may repeat: sum(a, b, c). */
   readonly repeats?: boolean
+  /** A text that is one of these words, written bare or in quotes: `draw: vapour`. */
+  readonly choices?: readonly string[]
   readonly help: string
 }
 
@@ -126,6 +128,11 @@ export interface Scope {
   /** In the order shown: `@3` is the third. */
   readonly rows: readonly { readonly id: string; readonly label: string }[]
   readonly things: readonly { readonly id: string; readonly name: string; readonly type: Type }[]
+  /**
+   * The words of the language (see reservedWords): a name that is one of them is that word, so that no new name in a
+   * sheet changes what a formula means; the sheet's own thing of that name is written in brackets, [air].
+   */
+  readonly words?: ReadonlySet<string>
 }
 
 /** A formula made ready to run, or why it cannot be. */

@@ -6,7 +6,8 @@ import type { Scale, Type, Vocabulary } from './types'
 
 /*
  * Which quantities may be joined, and what comes of it. Temperatures and gauge pressures are points on a scale: they
- * have differences, but no sum. `15 K` and `2 bar` may stand for a point or a difference: they are open.
+ * have differences, but no sum. The difference of two pressures is no pressure either: a gauge unit would take the
+ * ambient pressure off it. `15 K` and `2 bar` may stand for a point or a difference: they are open.
  */
 
 export type QuantityType = Extract<Type, { kind: 'quantity' }>
@@ -18,6 +19,7 @@ export const LOGICAL: Type = { kind: 'logical' }
 const TEMPERATURE = unitOf('K').dimension
 const PRESSURE = unitOf('Pa').dimension
 const isTemperature = (dimension: Dimension) => sameDimension(dimension, TEMPERATURE)
+const hasDifferences = (dimension: Dimension) => isTemperature(dimension) || sameDimension(dimension, PRESSURE)
 
 export const quantityType = (dimension: Dimension, scale: Scale): QuantityType => ({
   kind: 'quantity',
@@ -25,15 +27,17 @@ export const quantityType = (dimension: Dimension, scale: Scale): QuantityType =
   scale,
 })
 
+/** What a calculation gives: a temperature or a pressure may be meant as itself or as a difference. */
+export const derived = (dimension: Dimension): QuantityType =>
+  quantityType(dimension, hasDifferences(dimension) ? 'open' : 'ratio')
+
 /** The type of a literal: a unit with an offset gives a point; kelvin and absolute pressure are open. */
 export function literalType(unit: {
   readonly dimension: Dimension
   readonly offset: number
   readonly gauge: boolean
 }): QuantityType {
-  if (unit.offset !== 0 || unit.gauge) return quantityType(unit.dimension, 'point')
-  const open = isTemperature(unit.dimension) || sameDimension(unit.dimension, PRESSURE)
-  return quantityType(unit.dimension, open ? 'open' : 'ratio')
+  return unit.offset !== 0 || unit.gauge ? quantityType(unit.dimension, 'point') : derived(unit.dimension)
 }
 
 export function typeWords(type: Type, vocabulary: Vocabulary): string {
@@ -69,12 +73,12 @@ export function fits(type: Type, wanted: Type): boolean {
   }
 }
 
-function fitsQuantity(type: QuantityType, wanted: QuantityType): boolean {
-  if (!sameDimension(type.dimension, wanted.dimension)) return false
-  if (wanted.scale === 'point') return type.scale !== 'difference'
-  if (wanted.scale === 'difference') return type.scale !== 'point'
-  return true
-}
+const fitsQuantity = (type: QuantityType, wanted: QuantityType): boolean =>
+  sameDimension(type.dimension, wanted.dimension) && !scalesClash(type.scale, wanted.scale)
+
+/** A difference stands on one side, a reading or an absolute value on the other. */
+const scalesClash = (a: Scale, b: Scale) =>
+  (a === 'difference') !== (b === 'difference') && a !== 'open' && b !== 'open'
 
 /** Two quantities as their error names them. */
 export interface Operands {
@@ -95,21 +99,13 @@ export function binaryType(operator: BinaryOperator, left: QuantityType, right: 
       throw new Error(`${operator} has a rule of its own`)
     default:
       alike(left, right, words, 'compared')
-      if (scalesClash(left.scale, right.scale)) {
-        throw new Problem(
-          'dimension',
-          `${words.left} and ${words.right} cannot be compared: one is a reading, the other a difference`,
-        )
-      }
       return LOGICAL
   }
 }
 
-const scalesClash = (a: Scale, b: Scale) =>
-  (a === 'point' && b === 'difference') || (a === 'difference' && b === 'point')
-
 function alike(left: QuantityType, right: QuantityType, words: Operands, done: string): void {
-  if (sameDimension(left.dimension, right.dimension)) return
+  const clash = done === 'compared' && scalesClash(left.scale, right.scale)
+  if (sameDimension(left.dimension, right.dimension) && !clash) return
   const [a, b] = [dimensionWords(left.dimension, left.scale), dimensionWords(right.dimension, right.scale)]
   throw new Problem('dimension', `${words.left} is ${a} and ${words.right} is ${b}: they cannot be ${done}`)
 }
@@ -121,32 +117,31 @@ function sumType(operator: '+' | '-', left: QuantityType, right: QuantityType, w
 }
 
 function sumScale(left: QuantityType, right: QuantityType, words: Operands): Scale {
-  const [a, b] = [left.scale, right.scale]
-  if (a === 'point' && b === 'point') {
+  const scales = [left.scale, right.scale]
+  if (scales.every((scale) => scale === 'point')) {
     const what = isTemperature(left.dimension)
-      ? 'two temperatures cannot be added: a difference is written in K'
+      ? 'two temperatures cannot be added: a difference is written in K, a mean is average(…)'
       : 'two gauge readings cannot be added'
     throw new Problem('dimension', `${words.left} + ${words.right}: ${what}`)
   }
-  if (a === 'point' || b === 'point') {
-    if (a === 'ratio' || b === 'ratio') throw gaugeAndAbsolute(words)
+  if (scales.includes('point')) {
+    if (scales.includes('ratio')) throw gaugeAndAbsolute(words)
     return 'point'
   }
-  if (a === 'ratio' || b === 'ratio') return 'ratio'
-  return a === 'open' || b === 'open' ? 'open' : 'difference'
+  if (scales.includes('ratio')) return 'ratio'
+  return scales.includes('open') ? 'open' : 'difference'
 }
 
 function differenceScale(left: QuantityType, right: QuantityType, words: Operands): Scale {
   const [a, b] = [left.scale, right.scale]
-  if (b === 'point') {
-    if (a === 'difference')
-      throw new Problem('dimension', `${words.left} − ${words.right}: a reading cannot be taken from a difference`)
-    return 'difference'
+  if (!hasDifferences(left.dimension)) return 'ratio'
+  if (b === 'point' || b === 'ratio') {
+    if (a !== 'difference') return 'difference'
+    const whole = dimensionWords(right.dimension, b)
+    throw new Problem('dimension', `${words.left} − ${words.right}: ${whole} cannot be taken from a difference`)
   }
   // 15 °C − 10 K is 5 °C, T − 300 K is −11.85 K: the same number either way, so what it is stays open
-  if (a === 'point') return b === 'difference' ? 'point' : b === 'open' ? 'open' : 'difference'
-  if (a === 'ratio' || b === 'ratio') return 'ratio'
-  return a === 'difference' && b === 'difference' ? 'difference' : 'open'
+  return b === 'open' && a !== 'difference' ? 'open' : a
 }
 
 const gaugeAndAbsolute = (words: Operands) =>
@@ -166,14 +161,9 @@ function productType(operator: '*' | '/', left: QuantityType, right: QuantityTyp
   }
   const dimension =
     operator === '*' ? multiply(left.dimension, right.dimension) : divide(left.dimension, right.dimension)
-  return quantityType(dimension, productScale(operator, left, right, dimension))
-}
-
-/** A factor leaves a difference a difference; an absolute temperature times a number may be used as either. */
-function productScale(operator: '*' | '/', left: QuantityType, right: QuantityType, dimension: Dimension): Scale {
-  if (isDimensionless(right.dimension)) return left.scale === 'point' ? 'open' : left.scale
-  if (operator === '*' && isDimensionless(left.dimension)) return right.scale === 'point' ? 'open' : right.scale
-  return isTemperature(dimension) || sameDimension(dimension, PRESSURE) ? 'open' : 'ratio'
+  // a factor leaves a difference a difference; an absolute temperature times a number may be used as either
+  const scaled = isDimensionless(right.dimension) ? left : operator === '*' && isDimensionless(left.dimension) && right
+  return scaled && scaled.scale !== 'point' ? scaled : derived(dimension)
 }
 
 /** The one type that several results have together (the branches of an if); undefined where they have none. */
@@ -184,15 +174,12 @@ export function commonType(types: readonly Type[]): Type | undefined {
 function joined(a: Type, b: Type): Type | undefined {
   if (a.kind === 'any') return b
   if (b.kind === 'any') return a
-  if (a.kind === 'quantity' && b.kind === 'quantity') {
-    if (!sameDimension(a.dimension, b.dimension) || scalesClash(a.scale, b.scale)) return undefined
-    return a.scale === 'open'
-      ? b
-      : b.scale === 'open'
-        ? a
-        : a.scale === b.scale
-          ? a
-          : quantityType(a.dimension, 'ratio')
+  if (a.kind === 'list' && b.kind === 'list') {
+    const of = joined(a.of, b.of)
+    return of && { kind: 'list', of }
   }
-  return fits(a, b) && fits(b, a) ? a : undefined
+  if (a.kind !== 'quantity' || b.kind !== 'quantity') return fits(a, b) && fits(b, a) ? a : undefined
+  if (!fitsQuantity(a, b)) return undefined
+  if (a.scale === 'open') return b
+  return b.scale === 'open' || a.scale === b.scale ? a : quantityType(a.dimension, 'ratio')
 }

@@ -13,8 +13,13 @@ const problem = (text: string) => parse(text).problem
 
 describe('the committed parser', () => {
   it('should be in step with the grammar', () => {
-    const file = (name: string) => readFileSync(fileURLToPath(new URL(`../../lib/formula/${name}`, import.meta.url)), 'utf8')
-    const built = buildParserFile(file('formula.grammar'), { fileName: 'formula.grammar', typeScript: true, moduleStyle: 'es' })
+    const file = (name: string) =>
+      readFileSync(fileURLToPath(new URL(`../../lib/formula/${name}`, import.meta.url)), 'utf8')
+    const built = buildParserFile(file('formula.grammar'), {
+      fileName: 'formula.grammar',
+      typeScript: true,
+      moduleStyle: 'es',
+    })
     const tables = (text: string) => /parserData|states: *"(?:[^"\\]|\\.)*"/.exec(text)?.[0]
     expect(tables(file('parser.ts'))).toBe(tables(built.parser))
     expect(tables(built.parser)).toContain('states')
@@ -31,7 +36,7 @@ describe('what cannot be read', () => {
     ['[Header', 'a square bracket is not closed', 0],
     ['sum(1,)', 'a value is missing after the comma', 6],
     ['1 + * 2', 'a value is missing before *', 4],
-    ['5 zorks', 'no unit is called “zorks”', 2],
+    ['5 zorks', 'no unit is called “zorks”; a product is written with a sign: 5 * zorks', 2],
     ['T@', 'after @ stands from, all, a state’s number, or its label in brackets', 2],
     ['-2^2', 'a sign before a power can be read two ways: write (-2)^2 or -(2^2)', 0],
     ['$r:r1', 'a state cannot stand alone: it follows an @', 0],
@@ -53,7 +58,9 @@ const label = fc.stringMatching(/^[A-Za-z0-9][A-Za-z0-9 .+-]{0,10}[A-Za-z0-9]$/)
 const number = fc.double({ min: 0, max: 1e12, noNaN: true, noDefaultInfinity: true }).map((value) => String(value))
 const literal = fc.oneof(
   number,
-  fc.tuple(number, fc.constantFrom('bar', '°C', 'kg', 'bar(g)', '[W/(m² K)]', '[kg/m³]')).map(([value, unit]) => `${value} ${unit}`),
+  fc
+    .tuple(number, fc.constantFrom('bar', '°C', 'kg', 'bar(g)', '[W/(m² K)]', '[kg/m³]'))
+    .map(([value, unit]) => `${value} ${unit}`),
   fc.string({ maxLength: 8 }).map((text) => `"${text.replaceAll('"', '""')}"`),
 )
 const reference = fc.oneof(
@@ -67,7 +74,9 @@ const formula = fc.letrec<{ any: string }>((tie) => ({
     { depthSize: 'small', withCrossShrink: true },
     literal,
     reference,
-    fc.tuple(tie('any'), fc.constantFrom('+', '-', '*', '/', '^', '&', '=', '<>', '<', '>=', ' × ', '−'), tie('any')).map(([a, op, b]) => `(${a}) ${op} (${b})`),
+    fc
+      .tuple(tie('any'), fc.constantFrom('+', '-', '*', '/', '^', '&', '=', '<>', '<', '>=', ' × ', '−'), tie('any'))
+      .map(([a, op, b]) => `(${a}) ${op} (${b})`),
     tie('any').map((a) => `(${a}) %`),
     tie('any').map((a) => `-(${a})`),
     fc.tuple(tie('any'), name).map(([a, field]) => `(${a}).${field}`),
@@ -76,7 +85,8 @@ const formula = fc.letrec<{ any: string }>((tie) => ({
   ),
 })).any
 
-const withoutSpans = (ast: Ast | null): unknown => JSON.parse(JSON.stringify(ast, (key, value: unknown) => (/span/i.test(key) ? undefined : value)))
+const withoutSpans = (ast: Ast | null): unknown =>
+  JSON.parse(JSON.stringify(ast, (key, value: unknown) => (/span/i.test(key) ? undefined : value)))
 
 describe('printing', () => {
   it('should print a tree that parses to the same tree', () => {
@@ -105,11 +115,23 @@ describe('printing', () => {
 })
 
 describe('any text at all', () => {
-  const valid = ['charge(from: run@from, supply: s, until_p: 200 bar).T', 'if(p > 5 bar(g), "over", "within")', 'm - m@[Fill quick] + sum(m@all) %', '5 [W/(m^2 K)] * [Tank A].volume']
-  const mutated = fc.tuple(fc.constantFrom(...valid), fc.array(fc.tuple(fc.nat(60), fc.nat(3), fc.string({ maxLength: 3, unit: 'grapheme' })), { maxLength: 6 })).map(([text, cuts]) =>
-    cuts.reduce((so, [at, length, put]) => so.slice(0, at) + put + so.slice(at + length), text),
+  const valid = [
+    'charge(from: run@from, supply: s, until_p: 200 bar).T',
+    'if(p > 5 bar(g), "over", "within")',
+    'm - m@[Fill quick] + sum(m@all) %',
+    '5 [W/(m^2 K)] * [Tank A].volume',
+  ]
+  const mutated = fc
+    .tuple(
+      fc.constantFrom(...valid),
+      fc.array(fc.tuple(fc.nat(60), fc.nat(3), fc.string({ maxLength: 3, unit: 'grapheme' })), { maxLength: 6 }),
+    )
+    .map(([text, cuts]) => cuts.reduce((so, [at, length, put]) => so.slice(0, at) + put + so.slice(at + length), text))
+  const anything = fc.oneof(
+    mutated,
+    fc.string({ maxLength: 80, unit: 'grapheme' }),
+    fc.string({ maxLength: 80, unit: 'binary' }),
   )
-  const anything = fc.oneof(mutated, fc.string({ maxLength: 80, unit: 'grapheme' }), fc.string({ maxLength: 80, unit: 'binary' }))
 
   it('should be answered without a throw, by every entry of the language', () => {
     fc.assert(
@@ -117,7 +139,11 @@ describe('any text at all', () => {
         const { ast, problem: found } = parse(text)
         expect(ast === null).toBe(found !== null)
         const compilation = compile(text, SCOPE, VOCABULARY)
-        if (compilation.ok) compilation.run(compilation.reads.map(() => null), { p_Pa: 1e5, T_K: 290 })
+        if (compilation.ok)
+          compilation.run(
+            compilation.reads.map(() => null),
+            { p_Pa: 1e5, T_K: 290 },
+          )
         else expect(compilation.fault.reason).not.toBe('')
         complete(text, Math.floor(text.length / 2), SCOPE, VOCABULARY)
         expect(typeof show(bind(text, SCOPE), SCOPE)).toBe('string')

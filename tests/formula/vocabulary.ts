@@ -51,8 +51,18 @@ export const VOCABULARY: Vocabulary = {
         thing: 'tank',
         words: 'a tank',
         fields: [
-          { name: 'volume', type: quantityType('volume'), help: 'volume', get: ((args: { volume: number }) => args.volume) as (value: never) => Value },
-          { name: 'mode', type: { kind: 'text' }, help: 'mode', get: ((args: { mode: string }) => args.mode) as (value: never) => Value },
+          {
+            name: 'volume',
+            type: quantityType('volume'),
+            help: 'volume',
+            get: ((args: { volume: number }) => args.volume) as (value: never) => Value,
+          },
+          {
+            name: 'mode',
+            type: { kind: 'text' },
+            help: 'mode',
+            get: ((args: { mode: string }) => args.mode) as (value: never) => Value,
+          },
         ],
       },
     ],
@@ -77,10 +87,16 @@ export const SCOPE: Scope = {
 }
 
 /** What a formula gives when each cell it reads holds what `cells` says; the reason where it does not hold. */
-export function valueOf(text: string, cells: Readonly<Record<string, Value>> = {}, expectation?: Expectation): Value | string {
+export function valueOf(
+  text: string,
+  cells: Readonly<Record<string, Value>> = {},
+  expectation?: Expectation,
+): Value | string {
   const compilation = compile(text, SCOPE, VOCABULARY, expectation)
   if (!compilation.ok) return `! ${compilation.fault.reason}`
-  const values = compilation.reads.map((read) => (read.kind === 'cell' ? (cells[read.column] ?? null) : (cells[read.thing] ?? null)))
+  const values = compilation.reads.map((read) =>
+    read.kind === 'cell' ? (cells[read.column] ?? null) : (cells[read.thing] ?? null),
+  )
   const value = compilation.run(values, AROUND)
   return typeof value === 'object' && value !== null && 'fault' in value ? `! ${value.reason}` : value
 }

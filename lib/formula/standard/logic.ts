@@ -2,11 +2,9 @@ import { Problem } from '@/lib/errors'
 import { LOGICAL, commonType } from '../typing'
 import type { FunctionSpec, Parameter, Type, Value } from '../types'
 import { isFault } from '../values'
+import { ANY, GROUP, SOURCE } from './common'
 import { one } from './types'
 
-const ANY: Type = { kind: 'any' }
-const SOURCE = 'named as in OASIS OpenFormula 1.2'
-const GROUP = 'Standard'
 const CONDITION: Parameter = { name: 'condition', type: LOGICAL, help: 'a comparison, or yes or no' }
 const CONDITIONS: Parameter = { name: 'conditions', type: LOGICAL, repeats: true, help: 'comparisons' }
 
@@ -39,7 +37,8 @@ export const logicFunctions: readonly FunctionSpec[] = [
     evaluate: onlyEagerly,
     evaluateLazy: ({ condition, then, otherwise }) => {
       const holds = condition!()
-      if (holds !== null && isFault(holds)) return holds
+      if (holds === null) throw new Problem('argument', 'the condition is empty')
+      if (isFault(holds)) return holds
       return holds ? then!() : (otherwise?.() ?? null)
     },
   },
@@ -58,9 +57,21 @@ export const logicFunctions: readonly FunctionSpec[] = [
     evaluate: onlyEagerly,
     evaluateLazy: ({ value, otherwise }) => {
       const tried = value!()
-      return tried !== null && isFault(tried) ? otherwise!() : tried
+      return isFault(tried) ? otherwise!() : tried
     },
   },
+  ...(['iserror', 'isblank'] as const).map((name): FunctionSpec => ({
+    name,
+    group: GROUP,
+    parameters: [{ name: 'value', type: ANY, help: 'a cell, or any other value' }],
+    result: LOGICAL,
+    help: name === 'iserror' ? 'whether a value is an error' : 'whether a cell is empty',
+    example: { formula: `${name}(1/0)`, shown: name === 'iserror' ? 'yes' : 'no' },
+    source: SOURCE,
+    lazy: true,
+    evaluate: onlyEagerly,
+    evaluateLazy: ({ value }) => (name === 'iserror' ? isFault(value!()) : value!() === null),
+  })),
   {
     name: 'and',
     group: GROUP,
