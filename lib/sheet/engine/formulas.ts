@@ -110,11 +110,8 @@ function signature(compilation: Compilation, scope: Scope): string {
   const reads = compilation.reads.map((read) => {
     if (read.kind === 'thing') return [read, scope.things.find((thing) => thing.id === read.thing)]
     const row = read.row.at === 'row' ? read.row.row : null
-    return [
-      read,
-      scope.columns.find((column) => column.id === read.column),
-      row && scope.rows.findIndex((candidate) => candidate.id === row),
-    ]
+    const place = scope.rows.findIndex((candidate) => candidate.id === row)
+    return [read, scope.columns.find((column) => column.id === read.column), row && [place, scope.rows[place]?.label]]
   })
   return JSON.stringify([compilation.type, reads])
 }

@@ -1,4 +1,4 @@
-import { STANDARD_FUNCTIONS } from '@/lib/formula'
+import { STANDARD_FUNCTIONS, STANDARD_WORDS } from '@/lib/formula'
 import type { FunctionSpec, Vocabulary } from '@/lib/formula'
 import { RIG_SECTIONS } from '../doc/definition'
 import type { RigSection } from '../doc/definition'
@@ -29,6 +29,7 @@ export const VOCABULARY: Vocabulary = {
   functions: new Map(FUNCTIONS.map((spec) => [spec.name.toLowerCase(), spec])),
   things: new Map(THINGS.map((spec) => [spec.thing, spec])),
   words: new Map([
+    ...STANDARD_WORDS,
     ...GAS_WORDS.map(
       ({ word, fluid }) => [word, { type: thingType('gas'), value: gasThing(fluid), help: fluid.name }] as const,
     ),

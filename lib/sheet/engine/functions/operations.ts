@@ -72,6 +72,9 @@ function timeWords(time_s: number): string {
   return time_s < 7200 ? shown(time_s, 'time', 'min', 1) : shown(time_s, 'time', 'h', 1)
 }
 
+const HEATS: Readonly<Record<string, Heat>> = { none: 'adiabatic', shell: 'shell_at_gas_temperature' }
+const DRAWS: readonly Draw[] = ['mixed', 'vapour', 'liquid']
+
 export const operationFunctions: readonly FunctionSpec[] = [
   operation({
     name: 'start',
@@ -107,7 +110,8 @@ export const operationFunctions: readonly FunctionSpec[] = [
         type: TEXT,
         optional: true,
         named: true,
-        help: 'without a path: "none" (as standard) or "shell" for a shell that comes to the gas’s temperature',
+        choices: Object.keys(HEATS),
+        help: 'without a path: none (as standard), or shell for a shell that comes to the gas’s temperature',
       },
     ],
     help: 'gas flows in from a supply until a stop is reached',
@@ -122,7 +126,7 @@ export const operationFunctions: readonly FunctionSpec[] = [
         supply: valueOf<Supply>(args, 'supply'),
         through: optionalValue<Path>(args, 'through'),
         stops: stopsOf(args),
-        ...(args.heat !== undefined && { heat: heatOf(args) }),
+        ...(args.heat !== undefined && { heat: HEATS[args.heat as string] }),
       }),
   }),
   operation({
@@ -138,6 +142,7 @@ export const operationFunctions: readonly FunctionSpec[] = [
         optional: true,
         named: true,
         default: '"mixed"',
+        choices: DRAWS,
         help: 'of two phases: mixed, vapour or liquid',
       },
     ],
@@ -151,7 +156,7 @@ export const operationFunctions: readonly FunctionSpec[] = [
         from: valueOf<Run>(args, 'from'),
         through: optionalValue<Path>(args, 'through'),
         back_Pa: optionalNumber(args, 'back') ?? surroundings.p_Pa,
-        draw: drawOf(args),
+        draw: args.draw as Draw,
         stops: stopsOf(args),
       }),
   }),
@@ -171,20 +176,3 @@ export const operationFunctions: readonly FunctionSpec[] = [
       hold({ from: valueOf<Run>(args, 'from'), to_T_K: optionalNumber(args, 'to_T'), stops: stopsOf(args) }),
   }),
 ]
-
-const HEATS: Readonly<Record<string, Heat>> = { none: 'adiabatic', shell: 'shell_at_gas_temperature' }
-
-function heatOf(args: Arguments): Heat {
-  const heat = HEATS[String(args.heat)]
-  if (!heat)
-    throw new Problem('argument', `heat is one of ${Object.keys(HEATS).join(', ')}, not “${String(args.heat)}”`)
-  return heat
-}
-
-const DRAWS: readonly Draw[] = ['mixed', 'vapour', 'liquid']
-
-function drawOf(args: Arguments): Draw {
-  const draw = DRAWS.find((word) => word === args.draw)
-  if (!draw) throw new Problem('argument', `draw is one of ${DRAWS.join(', ')}, not “${String(args.draw)}”`)
-  return draw
-}
