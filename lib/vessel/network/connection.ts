@@ -15,13 +15,17 @@ export interface Boundary {
 export type End = { readonly volume: ControlVolume } | { readonly boundary: Boundary }
 
 /** Pressures this near each other, relative, count as equal. */
-export const EQUAL = 1e-6
+const EQUAL = 1e-6
+/** So many times that may lie between them where heat alone makes gas pass, slowly against how fast they adjust. */
+const SLAVED = 30
+/** Flow at which it is driven again, over that at the difference that counts as equal: past the root of `SLAVED`, lest both call each other. */
+const HANDED_BACK = 7
 
 /**
- * How a flow comes about. Where pressures have become equal, a path's law has no slope and a tiny difference passes
- * whatever is asked of it: the flow is then the one that keeps them equal.
+ * How a flow comes about. Where pressures have become equal a path's law has no slope, and a tiny difference passes
+ * whatever is asked of it: the flow is then the one that keeps that difference, and not the other way round.
  * - `driven`: by the pressure difference, after the law of its path.
- * - `level`: pressures are equal; heat alone makes gas pass.
+ * - `level`: pressures are as good as equal; heat alone makes gas pass.
  * - `shut`: a check valve is closed against the flow.
  */
 export type Mode = 'driven' | 'level' | 'shut'
@@ -53,6 +57,8 @@ export class Connection {
   private sense = 1
   /** Whether phases are still drawn apart. */
   private apart = true
+  /** The greatest flow with which a ramp has come to equal pressures: a ramp has no law to say what passes then. */
+  private rampEnded_kg_s = 0
   private fromVersion = -1
   private toVersion = -1
 
@@ -78,11 +84,6 @@ export class Connection {
     return (this.sense * this.drop_Pa) / (EQUAL * Math.max(pressureOf(this.from), pressureOf(this.to)))
   }
 
-  /** Whether its flow follows from how pressures are to go. */
-  get follows() {
-    return this.mode !== 'driven' || this.parts.ramp_Pa_s !== null
-  }
-
   /** Takes the states of both ends as they are; where it follows, `follow` then finds the flow. */
   evaluate() {
     const fromVersion = versionOf(this.from)
@@ -97,7 +98,8 @@ export class Connection {
       if (drop < 0 && backward) this.flow_kg_s = -this.law(backward, this.to, this.from)
       else this.flow_kg_s = this.law(forward, this.from, this.to, Math.min(pressureOf(this.from), pressureOf(this.to)))
     } else {
-      this.most_kg_s = this.law(forward, this.from, this.to, pressureOf(this.from) * (1 - EQUAL))
+      const most = this.law(forward, this.from, this.to, pressureOf(this.from) * (1 - EQUAL))
+      this.most_kg_s = this.parts.ramp_Pa_s === null ? most : this.rampEnded_kg_s
     }
     this.fromVersion = fromVersion
     this.toVersion = toVersion
@@ -124,15 +126,22 @@ export class Connection {
 
   /** Finds the flow asked for, with heat as it stands; returns by how much it changed, relative. */
   follow(): number {
-    if (!this.follows) return 0
     const before = this.flow_kg_s
     const still = this.pressureRate(0)
     const each = this.pressureRate(1) - still
     this.asked_kg_s = (this.target() - still) / each
     if (this.mode === 'shut') this.flow_kg_s = 0
-    else if (this.mode === 'driven') this.flow_kg_s = this.drop_Pa > 0 ? Math.max(0, this.asked_kg_s) : 0
-    else this.flow_kg_s = this.parts.backward ? this.asked_kg_s : Math.max(0, this.asked_kg_s)
+    else if (this.mode === 'level') this.flow_kg_s = this.levelFlow()
+    else if (this.ramping) this.flow_kg_s = this.drop_Pa > 0 ? Math.max(0, this.asked_kg_s) : 0
     return this.flow_kg_s === before ? 0 : Math.abs(this.flow_kg_s - before) / Math.abs(this.flow_kg_s)
+  }
+
+  /** What is asked, and besides what brings the difference slowly to where the path's law has it for that flow. */
+  private levelFlow(): number {
+    const { asked_kg_s: asked, most_kg_s: most } = this
+    const share = asked / most
+    const away = this.drop_Pa / (EQUAL * pressureOf(this.from)) - share * Math.abs(share)
+    return asked + (most / SLAVED) * away
   }
 
   /** Of the drop; for a ramp of the pressure of the volume it serves. */
@@ -151,8 +160,13 @@ export class Connection {
     return this.ramping ? -(this.parts.ramp_Pa_s ?? 0) : 0
   }
 
-  private get ramping() {
+  get ramping() {
     return this.mode === 'driven' && this.parts.ramp_Pa_s !== null
+  }
+
+  /** Below 1 where a driven flow is nearly what heat asks for: the drop then only follows. */
+  private get unslaved() {
+    return this.flow_kg_s === 0 ? Infinity : (2 * Math.abs(this.flow_kg_s - this.asked_kg_s)) / Math.abs(this.flow_kg_s)
   }
 
   /** Falls to zero where the mode is to change. */
@@ -160,11 +174,11 @@ export class Connection {
     const most = Math.max(this.most_kg_s, Number.MIN_VALUE)
     switch (this.mode) {
       case 'driven':
-        return Math.log(Math.max(this.unequal, 1e-9))
-      case 'level':
-        return this.parts.backward
-          ? 1 - Math.abs(this.asked_kg_s) / most
-          : Math.min(1 - this.asked_kg_s / most, this.asked_kg_s / most)
+        return Math.log(Math.max(Math.min(this.unequal, Math.max(this.unequal / SLAVED, this.unslaved)), 1e-9))
+      case 'level': {
+        const spare = 1 - Math.abs(this.asked_kg_s) / (HANDED_BACK * most)
+        return this.parts.backward ? spare : Math.min(spare, this.asked_kg_s / most)
+      }
       case 'shut':
         return Math.max(-this.drop_Pa / (EQUAL * pressureOf(this.to)), -this.asked_kg_s / most)
     }
@@ -185,9 +199,11 @@ export class Connection {
   }
 
   changeMode() {
-    if (this.mode === 'level')
-      this.mode = this.parts.backward || 2 * this.asked_kg_s > this.most_kg_s ? 'driven' : 'shut'
-    else this.mode = 'level'
+    if (this.mode === 'level') this.mode = this.parts.backward || this.asked_kg_s > this.most_kg_s ? 'driven' : 'shut'
+    else {
+      this.rampEnded_kg_s = Math.max(Math.abs(this.flow_kg_s), this.rampEnded_kg_s)
+      this.mode = 'level'
+    }
     this.sense = this.drop_Pa < 0 && this.parts.backward ? -1 : 1
     this.fromVersion = -1
   }

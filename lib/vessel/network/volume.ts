@@ -8,7 +8,7 @@ import { NO_WALL, wallOf, type Wall } from '../shell/wall'
 import type { Vessel } from '../vessel'
 import { energyByDensity } from './derivatives'
 
-const MAX_ROUNDS = 40
+const MAX_ROUNDS = 100
 
 /**
  * A vessel while it is being integrated. Its part of the solution vector is mass, internal energy and, where heat passes
@@ -107,19 +107,23 @@ export class ControlVolume {
 
   /** The temperature at which gas and shell together hold this energy. */
   private flashWithShell(m: number, rho: number, energy: number) {
+    const { T_min_K, T_max_K } = this.fluid.info
+    let [low, high] = [T_min_K, T_max_K]
     let T = this.gas.T_K
     for (let round = 0; round < MAX_ROUNDS; round++) {
       this.gas = this.fluid.state('rhoT', rho, T, this.gas, this.gas)
       this.evaluations += this.gas.evaluations
       const shell = evenWall(this.wall, T)
       const short = energy - m * this.gas.u_J_kg - shell.energy_J
-      const capacity = m * this.gas.cv_J_kgK + shell.capacity_J_K
-      const step = Math.max(-0.2 * T, Math.min(0.2 * T, short / capacity))
-      if (Math.abs(step) <= 1e-13 * T) {
+      if (short > 0) low = T
+      else high = T
+      const step = short / (m * this.gas.cv_J_kgK + shell.capacity_J_K)
+      if (Math.abs(step) <= 1e-14 * T || high - low <= 1e-14 * T) {
         this.cells_K.fill(T)
         return
       }
-      T += step
+      // The heat capacity of the contents jumps where a phase appears: Newton's step is held between bounds.
+      T = T + step > low && T + step < high ? T + step : (low + high) / 2
     }
     throw new Problem('unconverged', 'no temperature at which gas and shell together hold their energy was found')
   }

@@ -1,5 +1,5 @@
 import type { Network } from '../network/system'
-import { wallEnergy } from '../shell/temperatures'
+import { evenWall, wallEnergy } from '../shell/temperatures'
 import type { Plan } from './simulate'
 
 /**
@@ -26,6 +26,10 @@ export function balanceOf(plan: Plan, network: Network, y: Float64Array) {
     if (volume.cells > 0) energy += y[lost]
     massScale = Math.max(massScale, m, from.m_kg)
     energyScale = Math.max(energyScale, m * gas.cv_J_kgK * gas.T_K, Math.abs(y[into]), Math.abs(y[lost]))
+    // Where gas and shell share one temperature, their energies are found together and no more exactly than that.
+    if (volume.heat === 'shell_at_gas_temperature') {
+      energyScale = Math.max(energyScale, evenWall(wall, gas.T_K).capacity_J_K * gas.T_K)
+    }
   })
   network.connections.forEach(({ from, to }, i) => {
     const [passed, enthalpy] = network.flowLedger(i)

@@ -48,7 +48,7 @@ interface Link {
 export function link({ from, to, fluid, path, mass_kg, draw = 'mixed', bothWays, wrap }: Link): Connection {
   checkPath(path)
   const make = () => {
-    const inner = !path || path.kind === 'ramp' ? new FixedFlow(path ? Infinity : mass_kg) : resistanceOf(path, fluid)
+    const inner = !path || path.kind === 'ramp' ? new FixedFlow(mass_kg) : resistanceOf(path, fluid)
     return wrap ? wrap(inner) : inner
   }
   const open = path?.check === undefined ? bothWays : !path.check

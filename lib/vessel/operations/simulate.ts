@@ -1,6 +1,6 @@
 import { Problem } from '@/lib/errors'
 import { integrate, type Outcome } from '@/lib/numerics/ode'
-import { EQUAL, type Connection } from '../network/connection'
+import type { Connection } from '../network/connection'
 import { Recorder } from '../network/recorder'
 import { Network } from '../network/system'
 import type { ControlVolume } from '../network/volume'
@@ -12,6 +12,8 @@ import { report } from './report'
 import type { Numerics } from './requests'
 import { changeWatches, coldWatch, settledWatch, watchesFor, type NamedWatch } from './watches'
 
+/** A stop at the very pressure that it settles to counts as reached so near to it, relative. */
+const NEAR_ENOUGH = 4e-6
 const DEFAULT_RTOL = 1e-6
 /** A balance has no time to resolve: it is integrated over the mass that passes, nearly exactly. */
 const BALANCE_RTOL = 1e-10
@@ -33,6 +35,9 @@ export interface Plan extends Numerics {
 /** Carries a plan out: one run for each volume. */
 export function simulate(plan: Plan): Run[] {
   const { volumes, stops, timeless } = plan
+  if (timeless && stops.for_s !== undefined) {
+    throw new Problem('argument', 'a balance has no time in it: to stop after a time, give a path')
+  }
   const network = new Network(volumes, plan.connections)
   const y0 = begin(plan, network)
   const watches = watchesFor(volumes[0], plan.connections, stops)
@@ -84,7 +89,7 @@ function whatStopped(plan: Plan, outcome: Outcome, event: NamedWatch['name'] | n
 
 /** A stop at the very pressure of what it is joined to. */
 function reachedAsNearAsCan({ until_p_Pa = NaN }: Stops, { end }: Recorder) {
-  return Math.abs(end.p_Pa / until_p_Pa - 1) <= 2 * EQUAL
+  return Math.abs(end.p_Pa / until_p_Pa - 1) <= NEAR_ENOUGH
 }
 
 function wished(stops: Stops): string | null {
