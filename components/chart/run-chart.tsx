@@ -3,6 +3,7 @@
 import { useEffect, useRef } from 'react'
 import uPlot from 'uplot'
 import 'uplot/dist/uPlot.min.css'
+import './chart.css'
 
 export interface ChartSeries {
   readonly label: string
@@ -104,7 +105,7 @@ function options(
             Math.max(high, ...limits.map((line) => line.value)),
           ),
       },
-      ...(right && { right: { range: (_chart, low, high) => padded(low, high) } }),
+      ...(right && { right: { range: (_chart, low, high) => padded(Math.min(0, low), high) } }),
     },
     axes: [
       { ...AXIS, size: 26, values: (_chart, marks) => marks.map((mark) => `${mark} ${timeUnit}`) },
@@ -143,7 +144,9 @@ function drawLimit({ ctx, bbox, valToPos }: uPlot, { label, value }: LimitLine):
   ctx.moveTo(bbox.left, y)
   ctx.lineTo(bbox.left + bbox.width, y)
   ctx.stroke()
+  ctx.textAlign = 'left'
+  ctx.textBaseline = 'bottom'
   ctx.font = `${11 * devicePixelRatio}px "Atkinson Hyperlegible Next Variable"`
-  ctx.fillText(label, bbox.left + 6, y - 4 * devicePixelRatio)
+  ctx.fillText(label, bbox.left + 6, y - 2 * devicePixelRatio)
   ctx.restore()
 }

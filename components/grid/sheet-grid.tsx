@@ -38,7 +38,7 @@ interface SheetGridProps {
   readonly onRedo: () => void
 }
 
-const STATE_WIDTH = 190
+const STATE_WIDTH = 164
 
 /**
  * The grid draws the view and reports what is typed. It keeps no value of its own: an edit goes to the document, and

@@ -47,16 +47,19 @@ export function ReadingPanel({ selected, trace }: ReadingPanelProps) {
           {cell.mark === 'over' ? '▲ above its limit' : '▼ below its limit'}
         </p>
       )}
-      {cell.edit && (
-        <p className="figures mb-3 break-words rounded-lg bg-steel p-2.5 text-[12.5px] leading-relaxed">{cell.edit}</p>
-      )}
       <dl>
         <Line name="Quantity">{kindWords(column.quantity)}</Line>
         <Line name="This cell">
           {cell.origin === 'formula' && column.formula !== null ? 'follows its column' : ORIGINS[cell.origin]}
         </Line>
         {trace && trace.reads.length > 0 && (
-          <Line name="Reads">{trace.reads.map((item) => `${item.name} ${item.shown}`).join(', ')}</Line>
+          <Line name="Reads">
+            {trace.reads.map(({ name, shown }) => (
+              <span key={name} className="block">
+                <span className="text-reference">{name}</span> {shown || '–'}
+              </span>
+            ))}
+          </Line>
         )}
         {trace && <Line name="Read by">{trace.readBy.length > 0 ? trace.readBy.join(', ') : 'nothing'}</Line>}
       </dl>

@@ -126,7 +126,7 @@ function OpenedSheet({
     <>
       {bar}
       <LiveBanner live={live} onDismiss={() => connection.dismissNotice()} />
-      <div className="grid min-h-0 flex-1 grid-cols-[232px_minmax(0,1fr)] xl:grid-cols-[240px_minmax(0,1fr)_290px]">
+      <div className="grid min-h-0 flex-1 grid-cols-[224px_minmax(0,1fr)] xl:grid-cols-[228px_minmax(0,1fr)_272px]">
         <aside aria-label="Rig" className="overflow-y-auto border-r border-line bg-white p-3">
           <RigPanel
             things={view.things}

@@ -19,10 +19,13 @@ export function traceOf(definition: SheetDefinition, view: SheetView, row: strin
     definition.cells.get(cellKey(r, c)) ?? definition.columns.find((one) => one.id === c)?.formula ?? null
   const scope = scopeOf(definition)
   const own = formulaOf(row, column)
-  const reads = references(own).map((reference) => ({
-    name: show(textOf(own!, reference), scope),
-    shown: shownAt(reference, row, definition, view),
-  }))
+  const byName = new Map(
+    references(own).map((reference) => [
+      show(textOf(own!, reference), scope),
+      shownAt(reference, row, definition, view),
+    ]),
+  )
+  const reads = [...byName].map(([name, shown]) => ({ name, shown }))
   const readBy: string[] = []
   definition.rows.forEach((other, i) => {
     for (const candidate of definition.columns) {

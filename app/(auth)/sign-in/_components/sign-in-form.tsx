@@ -111,7 +111,7 @@ export function SignInForm({ destination, demo }: SignInFormProps) {
                     }}
                   >
                     <span>
-                      <b className="capitalize">{account.role}</b>: {account.name},
+                      <b className="capitalize">{account.role}</b>: {account.name}
                     </span>{' '}
                     <span className="text-[12.5px] text-dim">{account.email}</span>
                   </button>
