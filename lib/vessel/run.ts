@@ -40,6 +40,7 @@ export type StoppedBy =
 /** How heat passes between gas and shell: by the vessel's coefficients (needs time), or one of three limits. */
 export type Heat = 'by_coefficients' | 'adiabatic' | 'shell_at_gas_temperature' | 'isothermal'
 
+/** All NaN for a vessel without a shell. */
 export interface ShellState {
   /** Weighted by heat capacity: the temperature the shell would come to if it were left alone. */
   readonly mean_K: number

@@ -1,10 +1,12 @@
 import { Problem } from '@/lib/errors'
 import type { FieldSpec, Surroundings, ThingSpec, Type, Value } from '@/lib/formula'
 import type { Fluid } from '@/lib/fluids'
-import type { Path, Run, Supply } from '@/lib/vessel'
+import type { Cascade, Path, Run, Supply } from '@/lib/vessel'
 import { TEXT, quantityType, thingType } from '../types'
 import { thingOf } from './content'
 import { gasThing } from './functions/gases'
+import { M3_S_PER_M3_H } from './functions/paths'
+import type { Pair } from './functions/transfers'
 import type { RigVessel } from './functions/vessels'
 
 /** A number that a thing may not have: said in words where it is asked for. */
@@ -119,6 +121,31 @@ const SUPPLY_FIELDS: readonly FieldSpec[] = [
 
 const PATH_FIELDS: readonly FieldSpec[] = [
   number<Path>('diameter', 'length', 'bore', (path) => (path.kind === 'orifice' ? path.diameter_m : null)),
+  number<Path>('kv', 'flow_coefficient', 'flow coefficient Kv', (path) =>
+    path.kind === 'valve' ? path.Kv_m3_h * M3_S_PER_M3_H : null,
+  ),
+]
+
+const PAIR_FIELDS: readonly FieldSpec[] = [
+  number<Pair>('p', 'pressure', 'pressure at the end, of the first', ({ a }) => a.p_Pa),
+  field<Pair>('a', thingType('run'), 'the first vessel', ({ a }) => thingOf(a)),
+  field<Pair>('b', thingType('run'), 'the second vessel', ({ b }) => thingOf(b)),
+  field<Pair>('time', quantityType('time'), 'time it takes', ({ a }) =>
+    present(a.time_s, 'this is a balance alone: it has no time in it'),
+  ),
+  field<Pair>('stopped_by', TEXT, 'what stopped it', ({ a }) => a.stoppedBy),
+]
+
+const CASCADE_FIELDS: readonly FieldSpec[] = [
+  field<Cascade>('run', thingType('run'), 'the whole as one run', ({ run }) => thingOf(run)),
+  number<Cascade>('p', 'pressure', 'pressure at the end', ({ run }) => run.p_Pa),
+  number<Cascade>('T', 'temperature', 'gas temperature at the end', ({ run }) => run.T_K),
+  number<Cascade>('m', 'mass', 'mass of gas at the end', ({ run }) => run.m_kg),
+  number<Cascade>('T_peak', 'temperature', 'highest gas temperature', ({ run }) => run.T_peak_K),
+  field<Cascade>('time', quantityType('time'), 'time it takes', ({ run }) =>
+    present(run.time_s, 'this cascade is balances alone: it has no time in it'),
+  ),
+  number<Cascade>('stages', 'dimensionless', 'how many supplies were opened', ({ stages }) => stages.length),
 ]
 
 const SURROUNDINGS_FIELDS: readonly FieldSpec[] = [
@@ -134,6 +161,8 @@ const GAS_FIELDS: readonly FieldSpec[] = [
 /** Kinds of things that formulas deal in, in words, with what can be asked of each. */
 export const THINGS: readonly ThingSpec[] = [
   { thing: 'run', words: 'a run', fields: RUN_FIELDS },
+  { thing: 'pair', words: 'two vessels', fields: PAIR_FIELDS },
+  { thing: 'cascade', words: 'a cascade', fields: CASCADE_FIELDS },
   { thing: 'vessel', words: 'a vessel', fields: VESSEL_FIELDS },
   { thing: 'supply', words: 'a supply', fields: SUPPLY_FIELDS },
   { thing: 'path', words: 'a path', fields: PATH_FIELDS },

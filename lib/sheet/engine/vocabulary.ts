@@ -9,7 +9,9 @@ import { operationFunctions } from './functions/operations'
 import { pathFunctions } from './functions/paths'
 import { propertyFunctions } from './functions/properties'
 import { MATERIALS, materialThing, shellFunctions } from './functions/shells'
+import { sizingFunctions } from './functions/sizing'
 import { supplyFunctions } from './functions/supplies'
+import { transferFunctions } from './functions/transfers'
 import { vesselFunctions } from './functions/vessels'
 
 /** The function table: the one place where the formula language meets fluids and vessels. */
@@ -18,6 +20,8 @@ export const FUNCTIONS: readonly FunctionSpec[] = [
   ...gasFunctions,
   ...gasConstantFunctions,
   ...operationFunctions,
+  ...transferFunctions,
+  ...sizingFunctions,
   ...vesselFunctions,
   ...shellFunctions,
   ...supplyFunctions,

@@ -24,7 +24,7 @@ export function hold(request: HoldRequest): Run {
 function settledAt(from: Run, T_K: number): Run {
   const { vessel, fluid } = from
   const wall = wallOf(vessel.shell)
-  const shell = wall.cells > 0 ? evenShell(wall, T_K) : { ...from.shell, mean_K: T_K, inner_K: T_K, outer_K: T_K }
+  const shell = evenShell(wall, T_K)
   const settled = {
     operation: 'hold',
     vessel,
@@ -51,8 +51,8 @@ function settledAt(from: Run, T_K: number): Run {
     T_low_K: Math.min(from.T_K, T_K),
     p_peak_Pa: Math.max(from.p_Pa, state.p_Pa),
     p_low_Pa: Math.min(from.p_Pa, state.p_Pa),
-    shell_peak_K: Math.max(from.shell.inner_K, from.shell.outer_K, T_K),
-    shell_low_K: Math.min(from.shell.inner_K, from.shell.outer_K, T_K),
+    shell_peak_K: Math.max(from.shell.inner_K, from.shell.outer_K, shell.mean_K),
+    shell_low_K: Math.min(from.shell.inner_K, from.shell.outer_K, shell.mean_K),
     flow_peak_kg_s: 0,
     moved_kg: 0,
     heat_J: from.m_kg * (state.u_J_kg - from.u_J_kg),

@@ -52,19 +52,20 @@ function still(vessel: Vessel, fluid: Fluid, state: State, shellT_K: number): Ru
 }
 
 function unmoved(vessel: Vessel, fluid: Fluid, p_Pa: number, T_K: number, shellT_K: number) {
+  const shell = evenShell(wallOf(vessel.shell), shellT_K)
   return {
     operation: 'start',
     vessel,
     fluid,
     p_Pa,
     T_K,
-    shell: evenShell(wallOf(vessel.shell), shellT_K),
+    shell,
     T_peak_K: T_K,
     T_low_K: T_K,
     p_peak_Pa: p_Pa,
     p_low_Pa: p_Pa,
-    shell_peak_K: shellT_K,
-    shell_low_K: shellT_K,
+    shell_peak_K: shell.mean_K,
+    shell_low_K: shell.mean_K,
     flow_peak_kg_s: 0,
     moved_kg: 0,
     heat_J: 0,

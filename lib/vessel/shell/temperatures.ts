@@ -31,7 +31,8 @@ export function meanTemperature_K(wall: Wall, cells_K: ArrayLike<number>): numbe
   return heat / capacity
 }
 
-/** A shell at one temperature; without a shell that of its surroundings stands for it. */
+/** A shell at one temperature; NaN where there is no shell. */
 export function evenShell(wall: Wall, T_K: number): ShellState {
-  return { mean_K: T_K, inner_K: T_K, outer_K: T_K, cells_K: Array.from({ length: wall.cells }, () => T_K) }
+  const T = wall.cells > 0 ? T_K : NaN
+  return { mean_K: T, inner_K: T, outer_K: T, cells_K: Array.from({ length: wall.cells }, () => T) }
 }

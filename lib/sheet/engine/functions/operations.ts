@@ -1,6 +1,6 @@
 import { LRUCache } from 'lru-cache'
 import { Problem } from '@/lib/errors'
-import type { Arguments, FunctionSpec, Parameter, Surroundings, Thing, Value } from '@/lib/formula'
+import type { Arguments, FunctionSpec, Parameter, Surroundings, Thing, ThingKind, Value } from '@/lib/formula'
 import { charge, hold, start, vent } from '@/lib/vessel'
 import type { Draw, Heat, Path, Run, Stops, Supply } from '@/lib/vessel'
 import { TEXT, thingType } from '../../types'
@@ -14,27 +14,41 @@ import type { RigVessel } from './vessels'
 const runs = new LRUCache<string, Thing>({ max: 5_000 })
 
 const optional = { optional: true }
-const FROM = thingParameter('from', 'run', 'the run it starts from: run@from')
-const THROUGH = thingParameter(
+export const FROM = thingParameter('from', 'run', 'the run it starts from: run@from')
+export const THROUGH = thingParameter(
   'through',
   'path',
   'what the gas flows through; left out: the balance alone, with no time in it',
   optional,
 )
 
-const STOPS: readonly Parameter[] = [
+export const STOPS: readonly Parameter[] = [
   numberParameter('until_p', 'pressure', 'stop at this pressure', optional),
   numberParameter('until_T', 'temperature', 'stop at this gas temperature', optional),
   numberParameter('until_m', 'mass', 'stop at this mass of gas', optional),
+  numberParameter('until_x', 'fraction', 'of two phases: stop at this quality; 1: when no liquid is left', optional),
+  numberParameter('until_flow', 'mass_flow', 'stop when the flow has fallen to this', optional),
   numberParameter('for', 'time', 'stop after this time', optional),
+  {
+    name: 'until',
+    type: TEXT,
+    optional: true,
+    named: true,
+    choices: ['level', 'settled'],
+    help: 'level: when pressures are equal; settled: when nothing changes any more, temperatures neither',
+  },
 ]
 
-function stopsOf(args: Arguments): Stops {
+export function stopsOf(args: Arguments): Stops {
   return {
     until_p_Pa: optionalNumber(args, 'until_p'),
     until_T_K: optionalNumber(args, 'until_T'),
     until_m_kg: optionalNumber(args, 'until_m'),
+    until_x: optionalNumber(args, 'until_x'),
+    until_flow_kg_s: optionalNumber(args, 'until_flow'),
     for_s: optionalNumber(args, 'for'),
+    ...(args.until === 'level' && { level: true }),
+    ...(args.until === 'settled' && { settled: true }),
   }
 }
 
@@ -42,27 +56,40 @@ type Operation = Omit<FunctionSpec, 'group' | 'result' | 'evaluate'> & {
   readonly run: (args: Arguments, surroundings: Surroundings) => Run
 }
 
-function operation({ run, ...spec }: Operation): FunctionSpec {
+export function operation({ run, ...spec }: Operation): FunctionSpec {
   return {
     ...spec,
     group: 'Operations',
     result: thingType('run'),
-    evaluate: (args, surroundings): Value => {
-      const key = contentKey(spec.name, { ...args, around_T: surroundings.T_K, around_p: surroundings.p_Pa })
-      let made = runs.get(key)
-      if (!made) {
+    evaluate: (args, surroundings): Value =>
+      operationThing(spec.name, 'run', args, surroundings, (key) => {
         const result = run(args, surroundings)
-        made = thing('run', key, runWords(result), result)
         if (result.supply)
-          thing('supply', contentKey('left in the supply', { run: made }), 'what is left in the supply', result.supply)
-        runs.set(key, made)
-      }
-      return made
-    },
+          thing('supply', contentKey(`left in ${key}`, {}), 'what is left in the supply', result.supply)
+        return { value: result, shown: runWords(result) }
+      }),
   }
 }
 
-function runWords(run: Run): string {
+/** What an operation makes, by its content: worked out once. */
+export function operationThing(
+  name: string,
+  kind: ThingKind,
+  args: Arguments,
+  surroundings: Surroundings,
+  make: (key: string) => { readonly value: object; readonly shown: string },
+): Thing {
+  const key = contentKey(name, { ...args, around_T: surroundings.T_K, around_p: surroundings.p_Pa })
+  let made = runs.get(key)
+  if (!made) {
+    const { value, shown: words } = make(key)
+    made = thing(kind, key, words, value)
+    runs.set(key, made)
+  }
+  return made
+}
+
+export function runWords(run: Run): string {
   const state = `${shown(run.p_Pa, 'pressure', 'bar', 1)}, ${shown(run.T_K, 'temperature', '°C', 1)}`
   return run.time_s ? `${state} in ${timeWords(run.time_s)}` : state
 }
@@ -72,7 +99,21 @@ function timeWords(time_s: number): string {
   return time_s < 7200 ? shown(time_s, 'time', 'min', 1) : shown(time_s, 'time', 'h', 1)
 }
 
-const HEATS: Readonly<Record<string, Heat>> = { none: 'adiabatic', shell: 'shell_at_gas_temperature' }
+const HEATS: Readonly<Record<string, Heat>> = {
+  none: 'adiabatic',
+  shell: 'shell_at_gas_temperature',
+  held: 'isothermal',
+}
+export const HEAT: Parameter = {
+  name: 'heat',
+  type: TEXT,
+  optional: true,
+  named: true,
+  choices: Object.keys(HEATS),
+  help: 'none; shell: the shell is at the gas’s temperature; held: the gas stays at its temperature. Left out: none without a path, by the vessel’s coefficients with one',
+}
+export const heatOf = (args: Arguments) => (args.heat === undefined ? undefined : HEATS[args.heat as string])
+
 const DRAWS: readonly Draw[] = ['mixed', 'vapour', 'liquid']
 
 export const operationFunctions: readonly FunctionSpec[] = [
@@ -100,20 +141,7 @@ export const operationFunctions: readonly FunctionSpec[] = [
   }),
   operation({
     name: 'charge',
-    parameters: [
-      FROM,
-      thingParameter('supply', 'supply', 'what it is charged from'),
-      THROUGH,
-      ...STOPS,
-      {
-        name: 'heat',
-        type: TEXT,
-        optional: true,
-        named: true,
-        choices: Object.keys(HEATS),
-        help: 'without a path: none (as standard), or shell for a shell that comes to the gas’s temperature',
-      },
-    ],
+    parameters: [FROM, thingParameter('supply', 'supply', 'what it is charged from'), THROUGH, ...STOPS, HEAT],
     help: 'gas flows in from a supply until a stop is reached',
     example: {
       formula:
@@ -126,7 +154,7 @@ export const operationFunctions: readonly FunctionSpec[] = [
         supply: valueOf<Supply>(args, 'supply'),
         through: optionalValue<Path>(args, 'through'),
         stops: stopsOf(args),
-        ...(args.heat !== undefined && { heat: HEATS[args.heat as string] }),
+        heat: heatOf(args),
       }),
   }),
   operation({
@@ -145,6 +173,7 @@ export const operationFunctions: readonly FunctionSpec[] = [
         choices: DRAWS,
         help: 'of two phases: mixed, vapour or liquid',
       },
+      HEAT,
     ],
     help: 'gas flows out until a stop is reached',
     example: {
@@ -158,6 +187,7 @@ export const operationFunctions: readonly FunctionSpec[] = [
         back_Pa: optionalNumber(args, 'back') ?? surroundings.p_Pa,
         draw: args.draw as Draw,
         stops: stopsOf(args),
+        heat: heatOf(args),
       }),
   }),
   operation({
@@ -165,7 +195,7 @@ export const operationFunctions: readonly FunctionSpec[] = [
     parameters: [
       FROM,
       numberParameter('to_T', 'temperature', 'everything comes to this temperature, however long that takes', optional),
-      ...STOPS.filter((stop) => stop.name !== 'until_m'),
+      ...STOPS.filter((stop) => !['until_m', 'until_flow', 'until_x'].includes(stop.name)),
     ],
     help: 'closed, while heat passes between gas, shell and surroundings',
     example: {

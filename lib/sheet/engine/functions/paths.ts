@@ -12,7 +12,14 @@ const between0and1 = (value: number, words: string) => {
 }
 
 /** Kv in m³/h as the standard counts it: the table's quantity is SI, m³/s at a pressure drop of 1 bar of water. */
-const M3_S_PER_M3_H = 1 / 3600
+export const M3_S_PER_M3_H = 1 / 3600
+
+/** A path that was found by sizing, in few words. */
+export function pathWords(path: Path): string {
+  if (path.kind === 'orifice') return `${shown(path.diameter_m, 'length', 'mm')}, Cd ${path.dischargeCoefficient}`
+  if (path.kind === 'valve') return `Kv ${Number(path.Kv_m3_h.toPrecision(4))} m³/h, xT ${path.xT}`
+  return path.kind
+}
 
 export const pathFunctions: readonly FunctionSpec[] = [
   constructor<Path>({
