@@ -1,8 +1,14 @@
 import { Buffer } from 'node:buffer'
 import type { RawData, WebSocket } from 'ws'
 import type { Role } from '@/lib/auth/policies'
-import { CLOSE, LIMITS } from './protocol'
+import { CLOSE, LIMITS, MESSAGE } from './protocol'
 import type { Close } from './protocol'
+
+/**
+ * What a message about presence takes of the allowance, where any other takes one: browsers send back all that they hear
+ * of others, so that in a full room most of it is not of their own doing.
+ */
+const PRESENCE_COST = 0.02
 
 /** Who is at the other end. The role is what it was on entering: for show, never for a decision. */
 export interface Person {
@@ -16,6 +22,7 @@ export class Connection {
   private allowance: number = LIMITS.burst
   private refilledAt = Date.now()
   private alive = true
+  private ended = false
 
   constructor(
     private readonly socket: WebSocket,
@@ -24,10 +31,12 @@ export class Connection {
     closed: () => void,
   ) {
     socket.on('message', (data, isBinary) => {
+      // What still comes in after a message was dropped would build on it: nothing of it is taken.
+      if (this.ended) return
       if (!isBinary) return this.close(CLOSE.malformed)
       const bytes = toBytes(data)
       if (bytes.byteLength > LIMITS.messageBytes) return this.close(CLOSE.tooLarge)
-      if (!this.spend()) return this.close(CLOSE.tooMany)
+      if (!this.spend(bytes[0] === MESSAGE.awareness ? PRESENCE_COST : 1)) return this.close(CLOSE.tooMany)
       receive(bytes)
     })
     socket.on('pong', () => (this.alive = true))
@@ -43,6 +52,7 @@ export class Connection {
   }
 
   close(close: Close): void {
+    this.ended = true
     this.socket.close(close.code, close.reason)
   }
 
@@ -53,13 +63,13 @@ export class Connection {
     this.socket.ping()
   }
 
-  /** Takes one message out of an allowance that refills with time. */
-  private spend(): boolean {
+  /** Takes a message out of an allowance that refills with time. */
+  private spend(cost: number): boolean {
     const now = Date.now()
     this.allowance = Math.min(LIMITS.burst, this.allowance + ((now - this.refilledAt) / 1000) * LIMITS.perSecond)
     this.refilledAt = now
-    if (this.allowance < 1) return false
-    this.allowance -= 1
+    if (this.allowance < cost) return false
+    this.allowance -= cost
     return true
   }
 }

@@ -25,8 +25,9 @@ export class PresenceList<Member> {
     const user = this.users.get(member)
     if (!user) return []
     const heard: AwarenessEntry[] = []
-    for (const { clientId, state } of entries) {
-      if (!this.mayClaim(member, user, clientId)) continue
+    for (const given of entries) {
+      if (!this.mayClaim(member, user, given)) continue
+      const { clientId, state } = given
       const presence = state === null ? null : presenceSchema.safeParse(state).data
       if (presence === undefined) continue
       const present: PresentState | null = presence && { ...presence, user }
@@ -53,11 +54,14 @@ export class PresenceList<Member> {
     )
   }
 
-  private mayClaim(member: Member, user: PresentUser, clientId: number): boolean {
+  private mayClaim(member: Member, user: PresentUser, { clientId, state }: AwarenessEntry): boolean {
     const holder = this.clients.get(clientId)?.member
-    if (holder === undefined) return this.clientOf(member) === undefined
-    // A browser that comes back after a lost line may find its old connection still here: it is the same person's.
-    return holder === member || this.users.get(holder)?.id === user.id
+    if (holder === member) return true
+    if (this.clientOf(member) !== undefined) return false
+    if (holder === undefined) return true
+    // A browser that comes back after a lost line may find its old connection still here, under the same person. But
+    // browsers also send back what they heard of others; such an echo has the user in it, which only we write.
+    return this.users.get(holder)?.id === user.id && typeof state === 'object' && state !== null && !('user' in state)
   }
 
   private clientOf(member: Member): number | undefined {

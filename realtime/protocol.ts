@@ -47,7 +47,7 @@ export const LIMITS = {
   /** Bytes waiting to be sent to one connection. */
   backlogBytes: 16 * 1024 * 1024,
   roomMembers: 100,
-  /** Messages of one connection: so many at once, and so many a second for ever. */
+  /** Messages of one connection, presence aside: so many at once, and so many a second for ever. */
   burst: 600,
   perSecond: 100,
 } as const

@@ -23,8 +23,11 @@ export interface RunningServer {
 async function settleVariables(): Promise<void> {
   const { dataFolder, authSecret, publicUrl } = readEnvironment(process.env)
   process.env.NEXTAUTH_SECRET = authSecret ?? (await keptSecret(dataFolder))
-  // With no address given, the one that the request was sent to is taken, as a person on this machine expects.
-  if (!publicUrl) process.env.AUTH_TRUST_HOST = '1'
+  if (publicUrl) return
+  // With no address given, the one that the request was sent to is taken, as a person on this machine expects. An empty
+  // one would be taken for an address.
+  delete process.env.NEXTAUTH_URL
+  process.env.AUTH_TRUST_HOST = '1'
 }
 
 /**

@@ -373,6 +373,33 @@ describe('presence', () => {
     expect(watching.presence[1]!.clock).toBeGreaterThan(watching.presence[0]!.clock)
   })
 
+  it('of one person in several windows comes to rest', async () => {
+    const windows = await Promise.all([1, 2, 3, 4].map(() => join(world.engineer.id)))
+    const watching = await handMade(world.viewer.id)
+    for (const { provider } of windows) provider.awareness.setLocalState({ cell })
+    await vi.waitFor(() => {
+      const clients = new Set(watching.presence.flatMap(({ clientId, state }) => (state ? [clientId] : [])))
+      expect(clients).toEqual(new Set(windows.map(({ doc }) => doc.clientID)))
+    })
+    await new Promise((resolve) => setTimeout(resolve, 300))
+    const heard = watching.presence.length
+    await new Promise((resolve) => setTimeout(resolve, 300))
+    expect(watching.presence.length).toBe(heard)
+  })
+
+  it('of a browser whose old connection still hangs is taken over, and stays when that one goes', async () => {
+    const watching = await handMade(world.viewer.id)
+    const [old, back] = [await handMade(world.engineer.id), await handMade(world.engineer.id)]
+    old.send(awarenessMessage({ clientId: 5, state: { cell: null } }))
+    await vi.waitFor(() => expect(watching.presence).toHaveLength(1))
+    back.send(awarenessMessage({ clientId: 5, state: { cell } }))
+    await vi.waitFor(() => expect(watching.presence).toHaveLength(2))
+    old.close()
+    back.send(awarenessMessage({ clientId: 5, state: { cell, editing: true } }))
+    await vi.waitFor(() => expect(watching.presence).toHaveLength(3))
+    expect(watching.presence.map(({ state }) => state)).toMatchObject([{ cell: null }, { cell }, { editing: true }])
+  })
+
   it('of a browser that comes back is seen at once', async () => {
     const [watching, engineer] = [await join(world.viewer.id), await join(world.engineer.id)]
     const seen = () => watching.provider.awareness.getStates().get(engineer.doc.clientID)
