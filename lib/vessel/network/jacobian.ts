@@ -23,7 +23,7 @@ export function differenceJacobian(network: Network, y: Float64Array, f: Float64
   network.volumes.forEach((volume, index) => {
     const first = network.at[index] + 2
     const last = first + volume.cells - 1
-    const [, lost] = network.heatLedger(index)
+    const lost = network.heatLedger(index) + 1
     for (let set = first; set < first + Math.min(STRIDE, volume.cells); set++) {
       for (let cell = set; cell <= last; cell += STRIDE) moved[cell] = y[cell] + DIFFERENCE * scales[cell]
       network.rates(moved, rates)

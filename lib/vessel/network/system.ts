@@ -27,6 +27,9 @@ export class Network implements OdeSystem {
   readonly quadratures: number
   /** Where each volume's part begins. */
   readonly at: readonly number[]
+  /** Where the parts of each connection's ends begin, or -1. */
+  private readonly sources: readonly number[]
+  private readonly sinks: readonly number[]
   /** Set before the integration begins. */
   events: readonly Watch[] = []
   /** Calls of `rates`. */
@@ -40,6 +43,9 @@ export class Network implements OdeSystem {
     this.at = volumes.map((volume) => (size += volume.size) - volume.size)
     this.quadratures = PER_VOLUME * volumes.length + PER_CONNECTION * connections.length
     this.size = size + this.quadratures
+    const partOf = (end: End) => ('volume' in end ? this.at[volumes.indexOf(end.volume)] : -1)
+    this.sources = connections.map(({ from }) => partOf(from))
+    this.sinks = connections.map(({ to }) => partOf(to))
   }
 
   get evaluations() {
@@ -47,16 +53,14 @@ export class Network implements OdeSystem {
     return sum(this.volumes) + sum(this.connections)
   }
 
-  /** Places of a volume's ledger: heat into its contents, heat out of its shell. */
-  heatLedger(volume: number): [number, number] {
-    const at = this.size - this.quadratures + PER_VOLUME * volume
-    return [at, at + 1]
+  /** Place of a volume's ledger: heat into its contents; the next is heat out of its shell. */
+  heatLedger(volume: number) {
+    return this.size - this.quadratures + PER_VOLUME * volume
   }
 
-  /** Places of a connection's ledger: mass, enthalpy. */
-  flowLedger(connection: number): [number, number] {
-    const at = this.size - PER_CONNECTION * (this.connections.length - connection)
-    return [at, at + 1]
+  /** Place of a connection's ledger: mass that has passed; the next is its enthalpy. */
+  flowLedger(connection: number) {
+    return this.size - PER_CONNECTION * (this.connections.length - connection)
   }
 
   rates(y: Float64Array, out: Float64Array) {
@@ -68,9 +72,9 @@ export class Network implements OdeSystem {
     out.fill(0)
     for (let i = 0; i < connections.length; i++) this.addFlow(i, out)
     for (let i = 0; i < volumes.length; i++) {
-      const [into, lost] = this.heatLedger(i)
-      out[into] = volumes[i].settleRates(out, at[i])
-      out[lost] = volumes[i].outer.heat_W
+      const ledger = this.heatLedger(i)
+      out[ledger] = volumes[i].settleRates(out, at[i])
+      out[ledger + 1] = volumes[i].outer.heat_W
     }
   }
 
@@ -89,30 +93,28 @@ export class Network implements OdeSystem {
   inflow(volume: ControlVolume): number {
     let sum = 0
     for (const { from, to, flow_kg_s } of this.connections) {
-      if (volumeOf(to) === volume) sum += flow_kg_s
-      if (volumeOf(from) === volume) sum -= flow_kg_s
+      if ('volume' in to && to.volume === volume) sum += flow_kg_s
+      if ('volume' in from && from.volume === volume) sum -= flow_kg_s
     }
     return sum
   }
 
   private addFlow(index: number, out: Float64Array) {
-    const { from, to, flow_kg_s, h_J_kg } = this.connections[index]
+    const { flow_kg_s, h_J_kg } = this.connections[index]
     const energy = flow_kg_s * h_J_kg
-    const source = volumeOf(from)
-    const sink = volumeOf(to)
-    if (source) {
-      const at = this.at[this.volumes.indexOf(source)]
-      out[at] -= flow_kg_s
-      out[at + 1] -= energy
+    const source = this.sources[index]
+    const sink = this.sinks[index]
+    if (source >= 0) {
+      out[source] -= flow_kg_s
+      out[source + 1] -= energy
     }
-    if (sink) {
-      const at = this.at[this.volumes.indexOf(sink)]
-      out[at] += flow_kg_s
-      out[at + 1] += energy
+    if (sink >= 0) {
+      out[sink] += flow_kg_s
+      out[sink + 1] += energy
     }
-    const [mass, enthalpy] = this.flowLedger(index)
-    out[mass] = flow_kg_s
-    out[enthalpy] = energy
+    const ledger = this.flowLedger(index)
+    out[ledger] = flow_kg_s
+    out[ledger + 1] = energy
   }
 
   scales(out: Float64Array) {
@@ -121,7 +123,9 @@ export class Network implements OdeSystem {
   }
 
   longestStep() {
-    return Math.min(Infinity, ...this.connections.map((connection) => connection.longestStep_s))
+    let longest = Infinity
+    for (const connection of this.connections) longest = Math.min(longest, connection.longestStep_s)
+    return longest
   }
 
   eventValues(out: Float64Array) {
@@ -136,5 +140,3 @@ export class Network implements OdeSystem {
     differenceJacobian(this, y, f, out)
   }
 }
-
-const volumeOf = (end: End): ControlVolume | null => ('volume' in end ? end.volume : null)

@@ -18,7 +18,8 @@ export function balanceOf(plan: Plan, network: Network, y: Float64Array) {
     const { gas, wall, vessel, fluid, cells_K } = volume
     const m = gas.rho_kg_m3 * vessel.volume_m3
     const u = fluid.state('rhoT', gas.rho_kg_m3, gas.T_K).u_J_kg
-    const [into, lost] = network.heatLedger(i)
+    const into = network.heatLedger(i)
+    const lost = into + 1
     mass += m - from.m_kg
     energy += m * u - (from.m_kg > 0 ? from.m_kg * from.u_J_kg : 0)
     if (wall.cells > 0) energy += wallEnergy(wall, cells_K) - wallEnergy(wall, from.shell.cells_K)
@@ -32,7 +33,8 @@ export function balanceOf(plan: Plan, network: Network, y: Float64Array) {
     }
   })
   network.connections.forEach(({ from, to }, i) => {
-    const [passed, enthalpy] = network.flowLedger(i)
+    const passed = network.flowLedger(i)
+    const enthalpy = passed + 1
     const inward = ('volume' in to ? 1 : 0) - ('volume' in from ? 1 : 0)
     mass -= inward * y[passed]
     energy -= inward * y[enthalpy]

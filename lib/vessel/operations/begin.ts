@@ -48,11 +48,11 @@ function seed(network: Network, index: number, volume: ControlVolume, y: Float64
     if (atLow > 0 && atHigh < 0) warming(fallToZero(warming, low, atLow, high, atHigh, 1e-9 * atLow))
     // What the trace has taken up beyond its enthalpy has come from the shell.
     y[at + 2] -= y[at + 1] - m * h
-    y[network.heatLedger(index)[0]] = y[at + 1] - m * h
+    y[network.heatLedger(index)] = y[at + 1] - m * h
   }
-  const [mass, enthalpy] = network.flowLedger(through)
-  y[mass] = m
-  y[enthalpy] = m * h
+  const ledger = network.flowLedger(through)
+  y[ledger] = m
+  y[ledger + 1] = m * h
   if ('volume' in connection.from) {
     const donor = network.at[network.volumes.indexOf(connection.from.volume)]
     y[donor] -= m

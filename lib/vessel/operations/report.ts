@@ -71,7 +71,7 @@ function heatOf(network: Network, index: number, from: Run, y: Float64Array): nu
     case 'adiabatic':
       return 0
     case 'by_coefficients':
-      return y[network.heatLedger(index)[0]]
+      return y[network.heatLedger(index)]
     case 'isothermal':
       return volume.heldBy_J
     case 'shell_at_gas_temperature':
