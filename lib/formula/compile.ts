@@ -6,6 +6,7 @@ import { compileCall } from './calls'
 import { compareValues, numericOperation } from './operators'
 import { parse } from './parse'
 import { compileReference } from './references'
+import { bareCompoundUnit } from './syntax-reason'
 import { LOGICAL, NUMBER, TEXT, binaryType, derived, fits, literalType, typeWords } from './typing'
 import type { QuantityType } from './typing'
 import type { Compilation, Fault, Read, Scope, Surroundings, Type, Value, Vocabulary } from './types'
@@ -65,7 +66,10 @@ export function compile(
     }
   } catch (mistake) {
     if (!(mistake instanceof Problem)) throw mistake
-    return { ok: false, fault: fault(mistake.code, mistake.reason, mistake.span ?? ast.span) }
+    const { code, reason, span = ast.span } = mistake
+    // 5 W/(m^2 K) can be read, as watts over something, but was hardly meant so
+    const unit = bareCompoundUnit(text, span.from)
+    return { ok: false, fault: unit ? fault('syntax', unit.reason, unit.span) : fault(code, reason, span) }
   }
 }
 

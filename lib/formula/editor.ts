@@ -1,11 +1,13 @@
 import type { SyntaxNode } from '@lezer/common'
-import { QUANTITIES } from '@/lib/units'
+import { QUANTITIES, unitInFormula } from '@/lib/units'
 import type { FormulaProblem } from './ast'
 import { compile } from './compile'
 import type { Expectation } from './compile'
-import { written } from './names'
+import { bracketed, written } from './names'
+import { tooMuch } from './parse'
 import { parser } from './parser'
-import type { FunctionSpec, Scope, ThingKind, Vocabulary } from './types'
+import { fits } from './typing'
+import type { FunctionSpec, Parameter, Scope, ThingKind, Type, Vocabulary } from './types'
 
 /*
  * What an editor asks of the language, as plain data: what is wrong where, what may stand here, and which argument of
@@ -42,33 +44,54 @@ export interface Completions {
 /** What may stand at a place, in the order of likelihood: arguments, the sheet's own names, functions, words. */
 export function complete(text: string, position: number, scope: Scope, vocabulary: Vocabulary): Completions {
   const before = text.slice(0, position)
-  const word = /[\p{L}_][\p{L}_0-9]*$/u.exec(before)?.[0] ?? ''
+  if (tooMuch(text) !== null || openText(before)) return { from: position, options: [] }
+  const bracket = /(@|\d\s*)?\[[^\]]*$/u.exec(before)
+  if (bracket) return { from: before.lastIndexOf('['), options: bracketOptions(bracket[1], scope) }
+  const word = /[\p{L}_°][\p{L}_°0-9]*$/u.exec(before)?.[0] ?? ''
   const from = position - word.length
   const lead = before.slice(0, from)
-  if (/@\s*$/.test(lead)) return { from, options: rowOptions(scope) }
-  if (/\d\s+$/.test(lead) || (/\d$/.test(lead) && word)) return { from, options: UNIT_OPTIONS }
-  if (lead.endsWith('.') && !/\d\.$/.test(lead))
-    return { from, options: fieldOptions(lead.slice(0, -1), scope, vocabulary) }
+  if (/@\s*\d*$/.test(lead)) return { from: lead.search(/\d*$/), options: rowOptions(scope) }
+  if (NUMBER_AT_END.test(lead) && (word !== '' || /\s$/.test(lead))) return { from, options: UNIT_OPTIONS }
+  if (/[^\d\s]\d*\.$/.test(lead)) return { from, options: fieldOptions(lead.slice(0, -1), scope, vocabulary) }
   const call = callAt(text, position, vocabulary)
+  const wanted = call?.spec.parameters.find(({ name }) => name === call.parameter)
   return {
     from,
     options: [
+      ...choiceOptions(wanted),
       ...argumentOptions(call),
-      ...nameOptions(scope),
+      ...nameOptions(scope, typesOf(wanted)),
       ...functionOptions(vocabulary),
       ...wordOptions(vocabulary),
     ],
   }
 }
 
+/** Whether a text in quotes is still open at the end. */
+const openText = (before: string) => (before.match(/"/g)?.length ?? 0) % 2 === 1
+
+/** A number that is none of a name's own digits. */
+const NUMBER_AT_END = /(?:^|[^\p{L}\p{N}_@.$:])(?:\d+(?:\.\d+)?|\.\d+)(?:[eE][+-]?\d+)?\s*$/u
+
+const typesOf = (parameter: Parameter | undefined): readonly Type[] =>
+  parameter === undefined ? [] : Array.isArray(parameter.type) ? parameter.type : [parameter.type as Type]
+
 const UNIT_OPTIONS: readonly Completion[] = [...new Set(QUANTITIES.flatMap((quantity) => quantity.units))]
   .filter((unit) => unit !== '1')
   .map((unit) => ({
     label: unit,
-    apply: /^[\p{L}°µ]+(\(g\))?$|^%$/u.test(unit) ? unit : `[${unit}]`,
+    apply: unitInFormula(unit),
     kind: 'unit',
     detail: QUANTITIES.find((quantity) => quantity.units.includes(unit))!.label,
   }))
+
+/** What an opened square bracket may become: a unit behind a number, a label behind an @, or else a name. */
+function bracketOptions(lead: string | undefined, scope: Scope): readonly Completion[] {
+  if (lead === undefined) return nameOptions(scope, []).map((name) => ({ ...name, apply: bracketed(name.label) }))
+  if (lead !== '@') return UNIT_OPTIONS.map((unit) => ({ ...unit, apply: `[${unit.label}]` }))
+  const rows = scope.rows.map(({ label }, i) => ({ label, apply: bracketed(label), detail: `state ${i + 1}` }))
+  return rows.filter(({ label }) => label.trim() !== '').map((row) => ({ ...row, kind: 'row' }))
+}
 
 const rowOptions = (scope: Scope): Completion[] => [
   { label: 'from', apply: 'from', kind: 'row', detail: 'the state this one starts from' },
@@ -76,24 +99,23 @@ const rowOptions = (scope: Scope): Completion[] => [
   ...scope.rows.map((row, i): Completion => ({ label: `${i + 1}`, apply: `${i + 1}`, kind: 'row', detail: row.label })),
 ]
 
-const nameOptions = (scope: Scope): Completion[] => [
-  ...scope.columns
-    .filter((column) => column.symbol)
-    .map((column): Completion => ({
-      label: column.symbol,
-      apply: written(column.symbol),
-      kind: 'column',
-      detail: 'column',
-    })),
-  ...scope.things
-    .filter((thing) => thing.name)
-    .map((thing): Completion => ({
-      label: thing.name,
-      apply: written(thing.name),
-      kind: 'thing',
-      detail: thing.type.kind === 'thing' ? thing.type.thing : '',
-    })),
-]
+/** Names of what fits the argument that the cursor is in come first. */
+function nameOptions({ columns, things, words }: Scope, wanted: readonly Type[]): readonly Completion[] {
+  const names = [
+    ...columns.map(({ symbol, type }) => ({ name: symbol, type, kind: 'column' as const, detail: 'column' })),
+    ...things.map(({ name, type }) => ({ name, type, kind: 'thing' as const, detail: 'in the rig' })),
+  ].filter(({ name }) => name.trim() !== '')
+  const suits = ({ type }: { readonly type: Type }) => wanted.some((want) => fits(type, want))
+  return [...names.filter(suits), ...names.filter((name) => !suits(name))].map(({ name, kind, detail }) => ({
+    label: name,
+    apply: written(name, words),
+    kind,
+    detail,
+  }))
+}
+
+const choiceOptions = (parameter: Parameter | undefined): readonly Completion[] =>
+  (parameter?.choices ?? []).map((choice) => ({ label: choice, apply: choice, kind: 'word', detail: parameter!.help }))
 
 const functionOptions = (vocabulary: Vocabulary): Completion[] =>
   [...vocabulary.functions.values()].map((spec) => ({
@@ -158,11 +180,11 @@ export function callAt(text: string, position: number, vocabulary: Vocabulary): 
 
 function argumentsBefore(call: SyntaxNode, position: number, text: string, spec: FunctionSpec): Omit<CallAt, 'spec'> {
   const given: string[] = []
-  let commas = 0
+  let inOrder = 0
   let current: string | null = null
   for (let at = call.firstChild?.nextSibling ?? null; at; at = at.nextSibling) {
     if (at.name === ',' && at.to <= position) {
-      commas++
+      if (current === null) inOrder++
       current = null
     }
     if (at.name !== 'NamedArgument') continue
@@ -170,8 +192,9 @@ function argumentsBefore(call: SyntaxNode, position: number, text: string, spec:
     given.push(name)
     if (at.from <= position) current = name
   }
-  const inOrder = spec.parameters.filter((parameter) => !parameter.named)
-  return { given, parameter: current ?? inOrder[Math.min(commas, inOrder.length - 1)]?.name ?? null }
+  const unnamed = spec.parameters.filter((parameter) => !parameter.named)
+  const next = unnamed[inOrder] ?? unnamed.find((parameter) => parameter.repeats)
+  return { given, parameter: current ?? next?.name ?? null }
 }
 
 /** `charge(from:, supply:, through:, …)` in parts, for the line under the cursor. */

@@ -84,7 +84,9 @@ export function reservedWords(vocabulary: Vocabulary): ReadonlySet<string> {
   return new Set([...vocabulary.words.keys(), ...choices])
 }
 
-const PLAIN = /^[\p{L}_][\p{L}_0-9]*$/u
+/** What the grammar takes for an identifier: the letters of its token, then letters and digits. */
+const LETTERS = String.raw`A-Za-z_\u00aa\u00b5\u00ba\u00c0-\u00d6\u00d8-\u00f6\u00f8-\u02af\u0300-\u036f\u0370-\u1fff\u2126\u2c00-\ud7ff\uf900-\ufdcf\ufdf0-\ufffd`
+const PLAIN = new RegExp(`^[${LETTERS}][${LETTERS}0-9]*$`)
 
 /** A name as a formula writes it: in brackets where it is no plain word, or a word of the language. */
 export const written = (name: string, words?: ReadonlySet<string>): string =>

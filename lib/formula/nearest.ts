@@ -1,6 +1,6 @@
-/** The known word that a misspelt one was most likely meant to be: one or two letters off. */
+/** The known word that a misspelt one was most likely meant to be: a letter or two off. */
 export function nearest(word: string, known: Iterable<string>): string | undefined {
-  const allowed = word.length <= 4 ? 1 : 2
+  const allowed = word.length <= 2 ? 0 : word.length <= 5 ? 1 : 2
   let best: string | undefined
   let least = allowed + 1
   for (const candidate of known) {
@@ -19,14 +19,23 @@ export function suggestion(word: string, known: Iterable<string>): string {
 
 const LONGEST = 40
 
-/** Letters to put in, take out or change to make one word of the other. */
+/** Letters to put in, take out, change, or swap with their neighbour to make one word of the other. */
 function editDistance(a: string, b: string): number {
+  let before: number[] = []
   let row = Array.from({ length: b.length + 1 }, (_, i) => i)
   for (let i = 1; i <= a.length; i++) {
     const next = [i]
     for (let j = 1; j <= b.length; j++) {
-      next[j] = Math.min(row[j] + 1, next[j - 1] + 1, row[j - 1] + (a[i - 1] === b[j - 1] ? 0 : 1))
+      const same = a[i - 1] === b[j - 1]
+      const swapped = i > 1 && j > 1 && a[i - 1] === b[j - 2] && a[i - 2] === b[j - 1]
+      next[j] = Math.min(
+        row[j] + 1,
+        next[j - 1] + 1,
+        row[j - 1] + (same ? 0 : 1),
+        swapped ? before[j - 2] + 1 : Infinity,
+      )
     }
+    before = row
     row = next
   }
   return row[b.length]

@@ -94,7 +94,7 @@ function unknownName(name: string, scope: Scope, vocabulary: Vocabulary): string
     ...vocabulary.words.keys(),
   ]
   const meant = suggestion(name, known)
-  if (!meant && readUnit(name)) return `${unknown}; a compound unit is written in brackets: 5 [kJ/kg]`
+  if (!meant && readUnit(name)) return `${unknown}; a unit stands behind a number: 5 ${name}`
   return `${unknown}: no column, no thing of the rig and no word of the language is called so${meant}`
 }
 
