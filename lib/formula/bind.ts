@@ -1,3 +1,4 @@
+import type { SyntaxNode } from '@lezer/common'
 import { Problem } from '@/lib/errors'
 import type { Span } from '@/lib/errors'
 import type { RowAst, Target } from './ast'
@@ -15,19 +16,21 @@ import type { Scope } from './types'
 
 /** From what a person wrote to what is kept. Names that mean nothing, or two things, stay as they are. */
 export function bind(text: string, scope: Scope): string {
-  const bound = applied(text, changes(text, binding(scope)))
-  // names are followed in a broken formula too, but not where that would break it in another place
-  return referencesIn(bound).length === referencesIn(text).length ? bound : text
+  const { changes, broken } = rewriting(text, binding(scope))
+  const bound = applied(text, changes)
+  return !broken || changed(changed(bound, showing(scope)), binding(scope)) === bound ? bound : text
 }
 
 /** From what is kept to today's names, such that binding them gives the same again. */
 export function show(text: string, scope: Scope): string {
-  return applied(text, changes(text, showing(scope)))
+  const { changes, broken } = rewriting(text, showing(scope))
+  const shown = applied(text, changes)
+  return !broken || changed(shown, binding(scope)) === text ? shown : text
 }
 
 /** Where a stretch of a kept formula stands when that is shown. */
 export function shownSpan(text: string, span: Span, scope: Scope): Span {
-  const made = changes(text, showing(scope))
+  const made = rewriting(text, showing(scope)).changes
   const moved = (place: number, end: boolean) =>
     made.reduce((so, { span: { from, to }, text: put }) => {
       if (place >= to) return so + put.length - (to - from)
@@ -46,27 +49,35 @@ interface Change {
   readonly text: string
 }
 
-/** What would be put where, in the order of the text. Names are found even in a formula that has a mistake elsewhere. */
-function changes(text: string, renaming: Renaming): readonly Change[] {
-  const found: Change[] = []
+/**
+ * What would be put where, in the order of the text. Names are followed in a broken formula too, but there whoever
+ * rewrites it has to see to it that it comes back as the same text.
+ */
+function rewriting(
+  text: string,
+  renaming: Renaming,
+): { readonly changes: readonly Change[]; readonly broken: boolean } {
+  const changes: Change[] = []
   const put = (span: Span, replacement: string | null) => {
-    if (replacement === null || replacement === text.slice(span.from, span.to)) return
-    // in a broken formula something may stick to a name that would run into an identity
-    if (!/^[\p{L}\p{N}_]/u.test(text.slice(span.to))) found.push({ span, text: replacement })
+    if (replacement !== null && replacement !== text.slice(span.from, span.to))
+      changes.push({ span, text: replacement })
   }
-  for (const { target, row } of referencesIn(text)) {
+  const { references, broken } = referencesIn(text)
+  for (const { target, row } of references) {
     put(target.span, renaming.target(target))
     if (row) put(row.span, renaming.row(row))
   }
-  return found
+  return { changes, broken }
 }
 
-function referencesIn(text: string): readonly ReferenceAst[] {
-  if (tooMuch(text)) return []
+function referencesIn(text: string): { readonly references: readonly ReferenceAst[]; readonly broken: boolean } {
   const references: ReferenceAst[] = []
+  if (tooMuch(text)) return { references, broken: true }
+  let broken = false
   parser.parse(text).iterate({
-    enter: ({ name, node }) => {
-      if (name !== 'Reference' || node.getChild('⚠') || node.getChild('RowReference')?.getChild('⚠')) return
+    enter: ({ name, type, node }) => {
+      broken ||= type.isError
+      if (name !== 'Reference' || hasError(node)) return
       try {
         references.push(referenceAst(node, text))
       } catch (mistake) {
@@ -74,8 +85,16 @@ function referencesIn(text: string): readonly ReferenceAst[] {
       }
     },
   })
-  return references
+  return { references, broken }
 }
+
+function hasError(node: SyntaxNode): boolean {
+  for (let child = node.firstChild; child; child = child.nextSibling)
+    if (child.type.isError || hasError(child)) return true
+  return false
+}
+
+const changed = (text: string, renaming: Renaming) => applied(text, rewriting(text, renaming).changes)
 
 function applied(text: string, made: readonly Change[]): string {
   let done = ''

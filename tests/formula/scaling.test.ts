@@ -12,6 +12,7 @@ const COLUMNS = {
   L: quantityType('length'),
   n: quantityType('dimensionless'),
 }
+const seed = Number(process.env.SEED ?? Date.now() % 1e9)
 const NAMES = Object.keys(COLUMNS) as (keyof typeof COLUMNS)[]
 const SCOPE: Scope = {
   columns: NAMES.map((symbol) => ({ id: symbol, symbol, type: COLUMNS[symbol] })),
@@ -44,7 +45,7 @@ const scaleOf = (dimension: readonly number[], lambda: readonly number[]) =>
   dimension.reduce((product, exponent, i) => product * lambda[i] ** exponent, 1)
 
 describe('the dimension worked out for a formula', () => {
-  it('should be how its result changes when kilogram, metre and second are changed', () => {
+  it(`should be how its result changes when kilogram, metre and second are changed (seed ${seed})`, () => {
     let checked = 0
     fc.assert(
       fc.property(
@@ -77,7 +78,7 @@ describe('the dimension worked out for a formula', () => {
           }
         },
       ),
-      { numRuns: 1_500, seed: Number(process.env.SEED ?? 20_261_201) },
+      { numRuns: 1_500, seed },
     )
     expect(checked).toBeGreaterThan(400)
   })
