@@ -18,6 +18,8 @@ export type End = { readonly volume: ControlVolume } | { readonly boundary: Boun
 const EQUAL = 1e-6
 /** So many times that may lie between them where heat alone makes gas pass, slowly against how fast they adjust. */
 const SLAVED = 30
+/** How far heat changes the pressure, relative, while a difference comes to its place. */
+const EASE = 1e-3
 /** Flow at which it is driven again, over that at the difference that counts as equal: past the root of `SLAVED`, lest both call each other. */
 const HANDED_BACK = 7
 
@@ -136,12 +138,15 @@ export class Connection {
     return this.flow_kg_s === before ? 0 : Math.abs(this.flow_kg_s - before) / Math.abs(this.flow_kg_s)
   }
 
-  /** What is asked, and besides what brings the difference slowly to where the path's law has it for that flow. */
+  /**
+   * What is asked, a little more or less so that the difference comes to where the path's law has it for that flow: while
+   * heat changes the pressure by a thousandth, say, which is slow enough not to be felt.
+   */
   private levelFlow(): number {
     const { asked_kg_s: asked, most_kg_s: most } = this
-    const share = asked / most
-    const away = this.drop_Pa / (EQUAL * pressureOf(this.from)) - share * Math.abs(share)
-    return asked + (most / SLAVED) * away
+    const share = most > 0 ? asked / most : 0
+    const away = this.drop_Pa / pressureOf(this.from) - EQUAL * share * Math.abs(share)
+    return asked + Math.abs(asked) * (away / EASE)
   }
 
   /** Of the drop; for a ramp of the pressure of the volume it serves. */

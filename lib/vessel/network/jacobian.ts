@@ -46,4 +46,35 @@ export function differenceJacobian(network: Network, y: Float64Array, f: Float64
       moved[column] = y[column]
     }
   })
+  conserve(network, out)
+}
+
+/**
+ * Makes each column conserve mass and energy exactly, which differences do to rounding over their step alone: rows of
+ * contents are put together anew from the rows of what crosses their borders, and each cell's own entry closes its wall's.
+ */
+function conserve(network: Network, out: Float64Array): void {
+  const n = network.size
+  const active = n - network.quadratures
+  network.volumes.forEach((volume, index) => {
+    const at = network.at[index]
+    const ledger = network.heatLedger(index)
+    const last = at + 2 + volume.cells
+    for (let column = 0; column < active; column++) {
+      let mass = 0
+      let energy = out[ledger * n + column]
+      network.connections.forEach((_, i) => {
+        const side = Number(network.sinks[i] === at) - Number(network.sources[i] === at)
+        mass += side * out[network.flowLedger(i) * n + column]
+        energy += side * out[(network.flowLedger(i) + 1) * n + column]
+      })
+      out[at * n + column] = mass
+      out[(at + 1) * n + column] = energy
+      if (volume.cells === 0) continue
+      let kept = -out[ledger * n + column] - out[(ledger + 1) * n + column]
+      const own = column >= at + 2 && column < last ? column : at + 2
+      for (let row = at + 2; row < last; row++) if (row !== own) kept -= out[row * n + column]
+      out[own * n + column] = kept
+    }
+  })
 }

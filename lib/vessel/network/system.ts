@@ -28,8 +28,8 @@ export class Network implements OdeSystem {
   /** Where each volume's part begins. */
   readonly at: readonly number[]
   /** Where the parts of each connection's ends begin, or -1. */
-  private readonly sources: readonly number[]
-  private readonly sinks: readonly number[]
+  readonly sources: readonly number[]
+  readonly sinks: readonly number[]
   /** Set before the integration begins. */
   events: readonly Watch[] = []
   /** Calls of `rates`. */

@@ -6,9 +6,11 @@ import type { Draw, Heat, Run } from '../run'
 import { evenWall, wallEnergy } from '../shell/temperatures'
 import { NO_WALL, wallOf, type Wall } from '../shell/wall'
 import type { Vessel } from '../vessel'
-import { energyByDensity } from './derivatives'
+import { energyByDensity, pressureByDensity } from './derivatives'
 
 const MAX_ROUNDS = 100
+/** A liquid's pressure answers a thousandfold: so far its mass and energy are not resolved. */
+const STIFFEST = 100
 
 /**
  * A vessel while it is being integrated. Its part of the solution vector is mass, internal energy and, where heat passes
@@ -209,10 +211,16 @@ export class ControlVolume {
     return this.gas.u_J_kg + energyByDensity(this.gas) * this.gas.rho_kg_m3
   }
 
+  /**
+   * Magnitudes for the tolerance. Where pressure answers more than in proportion (a liquid, two phases) they are smaller
+   * by as much, so that it too is good to the tolerance.
+   */
   scales(out: Float64Array, at: number) {
     const { gas, m_kg, wall, cells_K } = this
-    out[at] = m_kg
-    out[at + 1] = m_kg * gas.cv_J_kgK * gas.T_K
+    const toMass = (gas.rho_kg_m3 * Math.abs(pressureByDensity(gas))) / gas.p_Pa
+    const toEnergy = (gas.T_K * Math.abs(gas.dpdT_rho_Pa_K)) / gas.p_Pa
+    out[at] = m_kg / Math.min(STIFFEST, Math.max(1, toMass))
+    out[at + 1] = (m_kg * gas.cv_J_kgK * gas.T_K) / Math.min(STIFFEST, Math.max(1, toEnergy))
     if (this.heat === 'shell_at_gas_temperature') out[at + 1] += evenWall(wall, gas.T_K).capacity_J_K * gas.T_K
     for (let i = 0; i < this.cells; i++) {
       out[at + 2 + i] = wall.mass_kg[i] * wall.caloric[i].capacity_J_kgK(cells_K[i]) * cells_K[i]
