@@ -1,61 +1,69 @@
+import type { Objective } from '@/lib/numerics/roots'
+import { monotoneRoot } from '@/lib/numerics/roots'
 import { Problem } from '@/lib/errors'
-import { monotoneRoot } from '@/lib/numerics/monotone'
+import type { Branch } from './chart'
+import type { State } from './fluid'
 import type { HelmholtzFluid } from './helmholtz-fluid'
-import { dpdrhoOf, evaluateAt, pressureOf } from './properties'
+import { setPressure, shift } from './properties'
+import { LIQUID, VAPOUR } from './saturation-table'
 import { bar, kelvin } from './words'
 
-/** Liquids at the highest pressures of any fluid here are within this many critical densities. */
-export const DENSEST = 8
+/** How far a pressure is off at a density: what a search for the density evaluates. */
+export class DensityAtPressure implements Objective {
+  value = 0
+  slope = 0
+  p_Pa = 0
+  private T_K = 0
+  private out!: State
 
-/** On which side of the two-phase region, or past it. */
-export type Branch = 'gas' | 'liquid' | 'beyond'
+  constructor(private readonly fluid: HelmholtzFluid) {}
 
-/** Where a branch meets the two-phase region. */
-export interface Edge {
-  readonly rho: number
-  readonly p_Pa: number
+  at(T_K: number, p_Pa: number, out: State): void {
+    this.T_K = T_K
+    this.p_Pa = p_Pa
+    this.out = out
+  }
+
+  evaluate(rho: number): void {
+    const { p_Pa, dpdrho_T_Pa_m3_kg } = this.fluid.singlePhase(this.T_K, rho, this.out)
+    this.value = p_Pa - this.p_Pa
+    this.slope = dpdrho_T_Pa_m3_kg
+  }
 }
 
-/**
- * The density at a temperature and pressure on one branch, where the pressure rises with it. Edges of the branch, kg/m³,
- * bound the search where they are known.
- */
-export function densityAt(
+/** A table's edge may be off by this much, and states on the edge itself have to be found. */
+const SLACK = 1e-6
+
+/** Fills the state of one phase at a temperature and pressure. */
+export function solveDensity(
   fluid: HelmholtzFluid,
   T_K: number,
   p_Pa: number,
   branch: Branch,
-  edge?: Edge,
-  guess?: number,
-): number {
-  const { alpha, scales, info } = fluid
-  const rho_critical = info.critical!.rho_kg_m3
-  const ideal = p_Pa / (scales.R_J_kgK * T_K)
-  // past an edge by a hair: the edge itself has to be found too
-  const low = branch === 'liquid' ? (edge ? edge.rho * (1 - 1e-7) : rho_critical) : 0
-  const high = branch === 'gas' ? (edge ? edge.rho * (1 + 1e-7) : rho_critical) : DENSEST * rho_critical
-  const first =
-    guess ??
-    (branch === 'gas'
-      ? gasGuess(ideal, edge, p_Pa, scales.R_J_kgK * T_K)
-      : branch === 'liquid'
-        ? (edge?.rho ?? 2.7 * rho_critical)
-        : Math.min(ideal, 2 * rho_critical))
-  const rho = monotoneRoot(
-    (rho, at) => {
-      evaluateAt(alpha, scales, T_K, rho)
-      at.value = pressureOf(alpha, scales, T_K, rho) - p_Pa
-      at.slope = dpdrhoOf(alpha, scales, T_K)
-    },
-    { low, high, guess: first, tolerance: 1e-9, most: 100 },
-  )
-  if (Number.isFinite(rho)) return rho
-  throw new Problem('unconverged', `no density of ${fluid.name} was found at ${bar(p_Pa)} and ${kelvin(T_K)}`)
-}
-
-/** From a compressibility factor that falls straight from 1 at no pressure to that of the saturated vapour. */
-function gasGuess(ideal: number, edge: Edge | undefined, p_Pa: number, RT: number): number {
-  if (!edge) return ideal
-  const Z_edge = edge.p_Pa / (edge.rho * RT)
-  return ideal / (1 + (Z_edge - 1) * (p_Pa / edge.p_Pa))
+  out: State,
+  guess = NaN,
+): State {
+  const { chart } = fluid
+  const { table } = fluid.boundary
+  const densest = chart.densest(T_K, branch)
+  const low = branch === 'liquid' ? table.rho(LIQUID, T_K) * (1 - SLACK) : 0
+  const high = branch === 'gas' ? table.rho(VAPOUR, T_K) * (1 + SLACK) : densest * 1.03
+  const first = guess > low && guess < high ? guess : chart.densityAt(T_K, p_Pa, branch)
+  const inside = Math.min(Math.max(first, low * (1 + 2 * SLACK)), high * (1 - 2 * SLACK))
+  const search = fluid.densitySearch
+  search.at(T_K, p_Pa, out)
+  const rho = monotoneRoot(search, low, high, inside, 1e-11)
+  if (Number.isNaN(rho)) {
+    throw branch === 'gas'
+      ? new Problem('unconverged', `no density of ${fluid.name} was found at ${bar(p_Pa)} and ${kelvin(T_K)}`)
+      : new Problem(
+          'state',
+          `${fluid.name} is solid at ${kelvin(T_K)} and ${bar(p_Pa)}: its equation does not reach there`,
+        )
+  }
+  shift(out, 0, -search.value / search.slope)
+  // of a cold liquid the equation gives a pressure with few digits: the one that was asked for is the better
+  setPressure(out, p_Pa)
+  fluid.checkFluid(out)
+  return out
 }

@@ -1,9 +1,11 @@
 import { Problem } from '@/lib/errors'
-import { monotoneRoot } from '@/lib/numerics/monotone'
-import { createState } from './fluid'
+import type { Objective } from '@/lib/numerics/roots'
+import { monotoneRoot } from '@/lib/numerics/roots'
 import type { State } from './fluid'
 import type { HelmholtzFluid } from './helmholtz-fluid'
-import { fillTwoPhase } from './properties'
+import { fillTwoPhase, shift } from './properties'
+import { LIQUID, VAPOUR } from './saturation-table'
+import type { Side } from './saturation-table'
 import { kelvin, perCubicMetre } from './words'
 
 type By = 'u' | 'h' | 'p'
@@ -18,7 +20,8 @@ function slopeOf(state: State, by: By): number {
 
 /**
  * The state at a density and an energy or a pressure. At constant density all three rise with temperature, through the
- * two-phase region and out of it. Where water contracts on warming, a pressure has two answers: the warmer is taken.
+ * two-phase region and out of it. Where a liquid contracts on warming (water below 4 °C) a pressure has two answers: the
+ * warmer is taken.
  */
 export function flashAtDensity(
   fluid: HelmholtzFluid,
@@ -28,38 +31,62 @@ export function flashAtDensity(
   out: State,
   guess?: State,
 ): State {
-  if (!(rho > 0)) throw new Problem('range', `the density of ${fluid.name} has to be above zero`)
-  const { T_min_K, T_max_K } = fluid.info
-  const T_edge = edgeTemperature(fluid, rho)
-  if (T_edge !== null) {
-    const edge = fluid.singlePhase(T_edge, rho, out)
-    if (value < valueOf(edge, by)) return twoPhase(fluid, rho, by, value, T_edge, out)
+  fluid.checkDensity(rho)
+  if (by === 'p') fluid.checkPressure(value)
+  const { boundary, info } = fluid
+  const { table } = boundary
+  const side: Side = rho < table.rho_top ? VAPOUR : LIQUID
+  const T_edge = table.T_atDensity(side, rho, boundary.T_low_K)
+  let low = info.T_min_K
+  if (!Number.isNaN(T_edge)) {
+    low = T_edge
+    const edge = edgeValue(fluid, side, T_edge, rho, by)
+    if (value < edge - 1e-10 * Math.abs(edge)) return belowEdge(fluid, rho, by, value, T_edge, out)
   }
-  const T = monotoneRoot(
-    (T, at) => {
-      fluid.singlePhase(T, rho, out)
-      at.value = valueOf(out, by) - value
-      at.slope = slopeOf(out, by)
-    },
-    {
-      low: (T_edge ?? T_min_K) * (1 - 1e-9),
-      high: T_max_K * 1.01,
-      guess: guess && guess.phase !== 'two-phase' ? guess.T_K : firstGuess(fluid, by, value, out, T_edge),
-      tolerance: 1e-10,
-      most: 100,
-    },
-  )
-  if (!Number.isFinite(T)) throw outside(fluid, rho, by, value, out)
-  fluid.checkTemperature(T)
-  fluid.singlePhase(T, rho, out)
-  if (out.p_Pa > fluid.info.p_max_Pa) fluid.checkPressure(out.p_Pa)
+  const near = guess && guess.phase !== 'two-phase' ? temperatureNear(guess, rho, by, value) : NaN
+  const first = near >= low && near <= info.T_max_K ? near : fluid.chart.atDensity(rho, by, value, T_edge)
+  const search = new TemperatureAtDensity(fluid, rho, by, value, out)
+  const T = monotoneRoot(search, low * (1 - 1e-8), info.T_max_K * (1 + 1e-8), first, 1e-10)
+  if (Number.isNaN(T)) throw outside(fluid, rho, by, value, out)
+  shift(out, -search.value / search.slope, 0)
+  fluid.checkTemperature(out.T_K)
+  if (out.p_Pa > info.p_max_Pa) fluid.checkPressure(out.p_Pa)
+  fluid.checkFluid(out)
   return out
 }
 
-function firstGuess(fluid: HelmholtzFluid, by: By, value: number, at: State, T_edge: number | null): number {
-  if (T_edge === null)
-    fluid.singlePhase(Math.max(fluid.info.T_min_K, Math.min(300, fluid.info.T_max_K)), at.rho_kg_m3 || 1, at)
-  return at.T_K + (value - valueOf(at, by)) / slopeOf(at, by)
+/** Where a neighbour's own derivatives lead to first order. */
+function temperatureNear(guess: State, rho: number, by: By, value: number): number {
+  const { T_K: T, rho_kg_m3: rho0, p_Pa: p, dpdT_rho_Pa_K: dpdT, dpdrho_T_Pa_m3_kg: dpdrho } = guess
+  const du = (p - T * dpdT) / (rho0 * rho0)
+  const drho = by === 'p' ? dpdrho : by === 'u' ? du : dpdrho / rho0 - (T * dpdT) / (rho0 * rho0)
+  const next = T + (value - valueOf(guess, by) - drho * (rho - rho0)) / slopeOf(guess, by)
+  return Math.abs(next - T) < 0.2 * T ? next : NaN
+}
+
+class TemperatureAtDensity implements Objective {
+  value = 0
+  slope = 0
+
+  constructor(
+    private readonly fluid: HelmholtzFluid,
+    private readonly rho: number,
+    private readonly by: By,
+    private readonly wanted: number,
+    private readonly out: State,
+  ) {}
+
+  evaluate(T_K: number): void {
+    this.fluid.singlePhase(T_K, this.rho, this.out)
+    this.value = valueOf(this.out, this.by) - this.wanted
+    this.slope = slopeOf(this.out, this.by)
+  }
+}
+
+function edgeValue(fluid: HelmholtzFluid, side: Side, T_K: number, rho: number, by: By): number {
+  const { table } = fluid.boundary
+  const p = table.p_Pa(side, T_K)
+  return by === 'p' ? p : table.u_J_kg(side, T_K) + (by === 'h' ? p / rho : 0)
 }
 
 function outside(fluid: HelmholtzFluid, rho: number, by: By, value: number, at: State): Problem {
@@ -72,81 +99,73 @@ function outside(fluid: HelmholtzFluid, rho: number, by: By, value: number, at: 
   )
 }
 
-/** Where a density lies on the edge of the two-phase region; null where it never does. */
-function edgeTemperature(fluid: HelmholtzFluid, rho: number): number | null {
-  const { boundary, info } = fluid
-  const T_low = info.triple!.T_K
-  const T_top = boundary.T_top_K
-  const gas = rho < info.critical!.rho_kg_m3
-  const edges = (T: number) => {
-    if (boundary.curve) return boundary.guessDensities(T)
-    const { liquid, vapour } = boundary.edgesAtT(T)
-    return { liquid: liquid.rho_kg_m3, vapour: vapour.rho_kg_m3 }
-  }
-  const inside = (T: number) => {
-    const { liquid, vapour } = edges(T)
-    return rho > vapour && rho < liquid
-  }
-  if (!inside(T_low)) return null
-  let [low, high] = [T_low, T_top]
-  for (let i = 0; i < 60 && high - low > 1e-13 * high; i++) {
-    const middle = (low + high) / 2
-    if (inside(middle)) low = middle
-    else high = middle
-  }
-  return boundary.curve ? polishEdge(fluid, (low + high) / 2, rho, gas) : (low + high) / 2
-}
-
-/** From the table's edge to the equation's own, by the slope of the saturated density. */
-function polishEdge(fluid: HelmholtzFluid, T_table: number, rho: number, gas: boolean): number {
-  const T_critical = fluid.info.critical!.T_K
-  let T = T_table
-  for (let i = 0; i < 3; i++) {
-    if (T_critical - T < 1e-6 * T_critical) return T
-    const { liquid, vapour } = fluid.boundary.solveAt(T)
-    const phase = gas ? vapour : liquid
-    const slope = (vapour.s_J_kgK - liquid.s_J_kgK) / (1 / vapour.rho_kg_m3 - 1 / liquid.rho_kg_m3)
-    const step = ((rho - phase.rho_kg_m3) * phase.dpdrho_T_Pa_m3_kg) / (slope - phase.dpdT_rho_Pa_K)
-    // where a liquid is densest its saturated density has no slope: the table's answer stands
-    if (!(Math.abs(step) < 0.01 * T)) return T
-    T = Math.min(T + step, T_critical)
-    if (Math.abs(step) < 1e-11 * T) return T
-  }
-  return T
-}
-
-const mixture = createState()
-
-function twoPhase(fluid: HelmholtzFluid, rho: number, by: By, value: number, T_edge: number, out: State): State {
-  const T_low = fluid.info.triple!.T_K
-  const at = (T: number) => {
-    const { liquid, vapour } = fluid.boundary.edgesAtT(T)
-    const [vl, vv] = [1 / liquid.rho_kg_m3, 1 / vapour.rho_kg_m3]
-    const x = Math.min(1, Math.max(0, (1 / rho - vl) / (vv - vl)))
-    if (!fluid.boundary.curve) fluid.boundary.mixed(liquid, vapour, x, out)
-    return fillTwoPhase(mixture, liquid, vapour, x)
-  }
-  if (value < valueOf(at(T_low), by)) {
+/** Colder than where the density leaves the two-phase region: two phases, or cold water that is denser than its edge. */
+function belowEdge(fluid: HelmholtzFluid, rho: number, by: By, value: number, T_edge: number, out: State): State {
+  const { boundary } = fluid
+  const { table, T_low_K } = boundary
+  boundary.checkEquilibrium()
+  const onTable = new TableAtDensity(fluid, rho, by, value)
+  const T_guess = monotoneRoot(onTable, T_low_K * (1 - 1e-9), T_edge, T_low_K + 0.7 * (T_edge - T_low_K), 1e-13)
+  if (Number.isNaN(T_guess)) {
     throw new Problem(
       'range',
-      `at ${perCubicMetre(rho)} this would be ${fluid.name} below its triple point, ${kelvin(T_low)}, which is not worked out here`,
+      `at ${perCubicMetre(rho)} this would be ${fluid.name} below its triple point, ${kelvin(T_low_K)}, which is not worked out here`,
     )
   }
-  const T = monotoneRoot(
-    (T, f) => {
-      const state = at(T)
-      f.value = valueOf(state, by) - value
-      f.slope = slopeOf(state, by)
-    },
-    {
-      low: T_low * (1 - 1e-12),
-      high: T_edge * (1 + 1e-9),
-      guess: T_low + 0.7 * (T_edge - T_low),
-      tolerance: 1e-11,
-      most: 100,
-    },
-  )
-  if (!Number.isFinite(T))
-    throw new Problem('unconverged', `no state of ${fluid.name} was found at ${perCubicMetre(rho)}`)
-  return Object.assign(out, at(Math.min(T, T_edge)))
+  let T = Math.min(T_guess - onTable.value / onTable.slope, T_edge)
+  if (rho >= table.rho(LIQUID, T)) {
+    const search = new TemperatureAtDensity(fluid, rho, by, value, out)
+    const found = monotoneRoot(search, T_low_K * (1 - 1e-9), T_edge, T, 1e-10)
+    if (Number.isNaN(found)) throw outside(fluid, rho, by, value, out)
+    shift(out, -search.value / search.slope, 0)
+    return out
+  }
+  for (let i = 0; i < 10; i++) {
+    const { liquid, vapour } = boundary.solveAt(T)
+    mix(liquid, vapour, rho, out)
+    const step = (value - valueOf(out, by)) / slopeOf(out, by)
+    if (!(Math.abs(step) < 0.01 * T)) break
+    if (Math.abs(step) < 1e-9 * T) {
+      boundary.moveAlong(liquid, vapour, step)
+      mix(liquid, vapour, rho, out)
+      break
+    }
+    T = Math.min(T + step, table.T_top_K)
+  }
+  return out
+}
+
+function mix(liquid: State, vapour: State, rho: number, out: State): void {
+  const [vl, vv] = [1 / liquid.rho_kg_m3, 1 / vapour.rho_kg_m3]
+  fillTwoPhase(out, liquid, vapour, Math.min(1, Math.max(0, (1 / rho - vl) / (vv - vl))))
+}
+
+/** The same search on the table alone, which costs no evaluation of the equation. */
+class TableAtDensity implements Objective {
+  value = 0
+  slope = 0
+
+  constructor(
+    private readonly fluid: HelmholtzFluid,
+    private readonly rho: number,
+    private readonly by: By,
+    private readonly wanted: number,
+  ) {}
+
+  evaluate(T_K: number): void {
+    const h = 1e-5 * T_K
+    this.value = this.at(T_K) - this.wanted
+    this.slope = (this.at(T_K + h) - this.at(T_K - h)) / (2 * h)
+  }
+
+  private at(T_K: number): number {
+    const { rho, by } = this
+    const { table } = this.fluid.boundary
+    const p = table.p_Pa(VAPOUR, T_K)
+    if (by === 'p') return p
+    const [vl, vv] = [1 / table.rho(LIQUID, T_K), 1 / table.rho(VAPOUR, T_K)]
+    const x = (1 / rho - vl) / (vv - vl)
+    const [ul, uv] = [table.u_J_kg(LIQUID, T_K), table.u_J_kg(VAPOUR, T_K)]
+    return ul + x * (uv - ul) + (by === 'h' ? p / rho : 0)
+  }
 }

@@ -1,95 +1,111 @@
 import { Problem } from '@/lib/errors'
-import { monotoneRoot } from '@/lib/numerics/monotone'
-import { DENSEST, densityAt } from './density'
+import type { Objective } from '@/lib/numerics/roots'
+import { monotoneRoot } from '@/lib/numerics/roots'
+import type { Branch } from './chart'
+import { solveDensity } from './density'
 import type { State } from './fluid'
 import type { HelmholtzFluid } from './helmholtz-fluid'
-import { dpdTOf, evaluateAt } from './properties'
-import { kelvin, perCubicMetre } from './words'
+import { fillTwoPhase, shift } from './properties'
+import { LIQUID, VAPOUR } from './saturation-table'
+import { kelvin } from './words'
 
-/** The state at a temperature and a pressure, an entropy or a density. */
-export function flashAtTemperature(
-  fluid: HelmholtzFluid,
-  T_K: number,
-  by: 'p' | 's' | 'rho',
-  value: number,
-  out: State,
-  guess?: State,
-): State {
+/** The state at a temperature and pressure. On the saturation curve itself it is the vapour. */
+export function flashPT(fluid: HelmholtzFluid, p_Pa: number, T_K: number, out: State, guess?: State): State {
   fluid.checkTemperature(T_K)
-  switch (by) {
-    case 'p':
-      return atPressure(fluid, T_K, value, out, guess)
-    case 's':
-      return atEntropy(fluid, T_K, value, out)
-    case 'rho':
-      return atDensity(fluid, T_K, value, out)
-  }
-}
-
-function atPressure(fluid: HelmholtzFluid, T_K: number, p_Pa: number, out: State, guess: State | undefined): State {
   fluid.checkPressure(p_Pa)
-  const known = guess && guess.phase !== 'two-phase' ? guess.rho_kg_m3 : undefined
-  let rho: number
-  if (T_K >= fluid.boundary.T_top_K) rho = densityAt(fluid, T_K, p_Pa, 'beyond', undefined, known)
-  else {
-    const { liquid, vapour } = fluid.boundary.edgesAtT(T_K)
-    const branch = p_Pa <= vapour.p_Pa ? 'gas' : 'liquid'
-    if (p_Pa > vapour.p_Pa && p_Pa < liquid.p_Pa) fluid.boundary.mixed(liquid, vapour, 0, out)
-    const edge = branch === 'gas' ? vapour : liquid
-    rho = densityAt(fluid, T_K, p_Pa, branch, { rho: edge.rho_kg_m3, p_Pa: edge.p_Pa }, known)
+  const { table } = fluid.boundary
+  let branch: Branch = 'beyond'
+  if (T_K < table.T_top_K) {
+    if (p_Pa <= table.p_Pa(VAPOUR, T_K) * (1 + 1e-10)) branch = 'gas'
+    else {
+      branch = 'liquid'
+      if (p_Pa < table.p_Pa(LIQUID, T_K) * (1 - 1e-10)) fluid.boundary.checkEquilibrium()
+    }
   }
-  fluid.singlePhase(T_K, rho, out)
-  // of a cold liquid the equation gives a pressure with few digits: the one that was asked for is the better
-  out.p_Pa = p_Pa
-  return out
+  const near = guess && guess.phase !== 'two-phase' ? densityNear(guess, T_K, p_Pa) : NaN
+  return solveDensity(fluid, T_K, p_Pa, branch, out, near)
 }
 
-function atEntropy(fluid: HelmholtzFluid, T_K: number, s: number, out: State): State {
-  const { alpha, scales, info } = fluid
-  const rho_critical = info.critical!.rho_kg_m3
-  let low = Math.log(1e-14 * rho_critical)
-  let high = Math.log(DENSEST * rho_critical)
-  if (T_K < fluid.boundary.T_top_K) {
-    const { liquid, vapour } = fluid.boundary.edgesAtT(T_K)
-    if (s >= vapour.s_J_kgK) high = Math.log(vapour.rho_kg_m3 * (1 + 1e-7))
-    else if (s <= liquid.s_J_kgK) low = Math.log(liquid.rho_kg_m3 * (1 - 1e-7))
-    else return fluid.boundary.mixed(liquid, vapour, (s - liquid.s_J_kgK) / (vapour.s_J_kgK - liquid.s_J_kgK), out)
+/** Where a neighbouring state leads to first order; of a gas along its compressibility factor. */
+function densityNear(guess: State, T_K: number, p_Pa: number): number {
+  const { rho_kg_m3: rho, T_K: T, p_Pa: p, dpdT_rho_Pa_K: dpdT, dpdrho_T_Pa_m3_kg: dpdrho } = guess
+  return rho + (p_Pa - p - dpdT * (T_K - T)) / dpdrho
+}
+
+/**
+ * The state at a temperature and entropy. Where a liquid contracts on warming (water below 4 °C) compression raises its
+ * entropy first: of several states the two-phase one is taken, else the thinner.
+ */
+export function flashTs(fluid: HelmholtzFluid, T_K: number, s: number, out: State, guess?: State): State {
+  fluid.checkTemperature(T_K)
+  const { chart } = fluid
+  const { table } = fluid.boundary
+  let branch: Branch = 'beyond'
+  let [low, high] = [1e-14 * table.rho_top, 0]
+  if (T_K < table.T_top_K) {
+    const [s_liquid, s_vapour] = [table.s_J_kgK(LIQUID, T_K), table.s_J_kgK(VAPOUR, T_K)]
+    const hair = 1e-10 * (s_vapour - s_liquid)
+    if (s > s_liquid + hair && s < s_vapour - hair) {
+      fluid.boundary.checkEquilibrium()
+      const { liquid, vapour } = fluid.boundary.solveAt(T_K)
+      const x = (s - liquid.s_J_kgK) / (vapour.s_J_kgK - liquid.s_J_kgK)
+      return fillTwoPhase(out, liquid, vapour, Math.min(1, Math.max(0, x)))
+    }
+    branch = s >= s_vapour - hair ? 'gas' : 'liquid'
+    if (branch === 'gas') high = table.rho(VAPOUR, T_K) * (1 + 1e-7)
+    else low = table.rho(LIQUID, T_K) * (1 - 1e-7)
   }
-  const logRho = monotoneRoot(
-    (logRho, at) => {
-      const rho = Math.exp(logRho)
-      evaluateAt(alpha, scales, T_K, rho)
-      at.value = scales.R_J_kgK * (alpha.B1 + alpha.A10 - alpha.B0 - alpha.A00) - s
-      at.slope = -dpdTOf(alpha, scales, rho) / rho
-    },
-    { low, high, guess: (low + high) / 2, tolerance: 1e-12, most: 100 },
-  )
-  if (!Number.isFinite(logRho)) throw new Problem('state', `no ${fluid.name} at ${kelvin(T_K)} has this entropy`)
-  fluid.singlePhase(T_K, Math.exp(logRho), out)
+  if (branch !== 'gas') high = chart.densest(T_K, branch) * 1.03
+  const first =
+    guess && guess.phase !== 'two-phase' && Math.abs(guess.T_K / T_K - 1) < 0.02
+      ? guess.rho_kg_m3
+      : chart.atEntropy(T_K, s, branch)
+  const search = new LogDensityAtEntropy(fluid, T_K, s, out)
+  const logRho = monotoneRoot(search, Math.log(low), Math.log(high), Math.log(first), 1e-12)
+  if (Number.isNaN(logRho)) throw new Problem('state', `no ${fluid.name} at ${kelvin(T_K)} has this entropy`)
+  shift(out, 0, (-search.value / search.slope) * out.rho_kg_m3)
   fluid.checkPressure(out.p_Pa)
+  fluid.checkFluid(out)
   return out
 }
 
-function atDensity(fluid: HelmholtzFluid, T_K: number, rho: number, out: State): State {
-  if (!(rho > 0)) throw new Problem('range', `the density of ${fluid.name} has to be above zero`)
-  if (rho > DENSEST * fluid.info.critical!.rho_kg_m3)
-    throw new Problem('range', `no ${fluid.name} is as dense as ${perCubicMetre(rho)} here`)
-  if (T_K < fluid.boundary.T_top_K && nearDome(fluid, T_K, rho)) {
-    const { liquid, vapour } = fluid.boundary.edgesAtT(T_K)
-    if (rho > vapour.rho_kg_m3 && rho < liquid.rho_kg_m3) {
+class LogDensityAtEntropy implements Objective {
+  value = 0
+  slope = 0
+
+  constructor(
+    private readonly fluid: HelmholtzFluid,
+    private readonly T_K: number,
+    private readonly s: number,
+    private readonly out: State,
+  ) {}
+
+  evaluate(logRho: number): void {
+    const { s_J_kgK, dpdT_rho_Pa_K, rho_kg_m3 } = this.fluid.singlePhase(this.T_K, Math.exp(logRho), this.out)
+    this.value = s_J_kgK - this.s
+    this.slope = -dpdT_rho_Pa_K / rho_kg_m3
+  }
+}
+
+/** Below a margin outside the two-phase region the table alone tells on which side a density is. */
+const HAIR = 1e-8
+
+/** The state at a density and temperature. */
+export function flashRhoT(fluid: HelmholtzFluid, rho: number, T_K: number, out: State): State {
+  fluid.checkTemperature(T_K)
+  fluid.checkDensity(rho)
+  const { table } = fluid.boundary
+  if (T_K < table.T_top_K) {
+    const [rho_liquid, rho_vapour] = [table.rho(LIQUID, T_K), table.rho(VAPOUR, T_K)]
+    if (rho < rho_liquid * (1 - HAIR) && rho > rho_vapour * (1 + HAIR)) {
+      fluid.boundary.checkEquilibrium()
+      const { liquid, vapour } = fluid.boundary.solveAt(T_K)
       const [vl, vv] = [1 / liquid.rho_kg_m3, 1 / vapour.rho_kg_m3]
-      return fluid.boundary.mixed(liquid, vapour, (1 / rho - vl) / (vv - vl), out)
+      return fillTwoPhase(out, liquid, vapour, Math.min(1, Math.max(0, (1 / rho - vl) / (vv - vl))))
     }
   }
   fluid.singlePhase(T_K, rho, out)
-  // a cold liquid near its saturation may come out a hair below zero: see checkPressure's callers for p/T
   if (out.p_Pa > fluid.info.p_max_Pa) fluid.checkPressure(out.p_Pa)
+  fluid.checkFluid(out)
   return out
-}
-
-/** By the table of the curve, with room for its error: costs no evaluation where the state is well outside. */
-function nearDome(fluid: HelmholtzFluid, T_K: number, rho: number): boolean {
-  if (!fluid.boundary.curve) return true
-  const { liquid, vapour } = fluid.boundary.guessDensities(T_K)
-  return rho > vapour * 0.999 && rho < liquid * 1.001
 }

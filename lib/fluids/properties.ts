@@ -42,6 +42,23 @@ export function fillSinglePhase(out: State, alpha: HelmholtzEnergy, scales: Scal
   return out
 }
 
+/** Moves a state of one phase to first order in temperature and density: for steps of 1e-9 and less. */
+export function shift(state: State, dT: number, drho: number): void {
+  const { T_K: T, rho_kg_m3: rho, p_Pa: p, cv_J_kgK: cv, dpdT_rho_Pa_K: dpdT, dpdrho_T_Pa_m3_kg: dpdrho } = state
+  state.T_K = T + dT
+  state.rho_kg_m3 = rho + drho
+  state.p_Pa = p + dpdT * dT + dpdrho * drho
+  state.u_J_kg += cv * dT + ((p - T * dpdT) / (rho * rho)) * drho
+  state.s_J_kgK += (cv / T) * dT - (dpdT / (rho * rho)) * drho
+  state.h_J_kg = state.u_J_kg + state.p_Pa / state.rho_kg_m3
+}
+
+/** Gives a state the pressure that is known better than the equation gives it. */
+export function setPressure(state: State, p_Pa: number): void {
+  state.p_Pa = p_Pa
+  state.h_J_kg = state.u_J_kg + p_Pa / state.rho_kg_m3
+}
+
 /** Vapour and liquid side by side, mixed and in equilibrium, at a quality between 0 and 1. */
 export function fillTwoPhase(out: State, liquid: State, vapour: State, x: number): State {
   const [vl, vv] = [1 / liquid.rho_kg_m3, 1 / vapour.rho_kg_m3]

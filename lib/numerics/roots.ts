@@ -1,0 +1,47 @@
+/** A function of one variable that is evaluated into its fields, so that a search allocates nothing. */
+export interface Objective {
+  value: number
+  slope: number
+  evaluate(x: number): void
+}
+
+const MOST = 120
+
+/**
+ * The zero of a function that rises or falls all the way between two bounds. Each step goes through the last two points and
+ * their slopes (a cubic in the inverse function; the first by Newton's method), kept between the bounds by halving, so that
+ * it always ends.
+ * @param tolerance a step this small, relative to x, ends the search
+ * @returns the last x at which the objective was evaluated; `value / slope` there is the step that was not worth taking.
+ *   NaN where the bounds enclose no zero.
+ */
+export function monotoneRoot(f: Objective, low: number, high: number, guess: number, tolerance: number): number {
+  let [a, b] = [low, high]
+  let x = guess > a && guess < b ? guess : (a + b) / 2
+  let [x0, f0, g0] = [NaN, NaN, NaN]
+  let lastStep = Infinity
+  for (let i = 0; i < MOST; i++) {
+    f.evaluate(x)
+    const { value, slope } = f
+    if (value === 0) return x
+    if (value > 0 === slope > 0) b = x
+    else a = x
+    let step = -value / slope
+    if (Math.abs(step) <= tolerance * Math.abs(x)) return x
+    const t = -value / (f0 - value)
+    if (Math.abs(t) < 0.5 && g0 * slope > 0) {
+      const h = f0 - value
+      step = t * t * (3 - 2 * t) * (x0 - x) + h * (t * (1 - t) * (1 - t) * (1 / slope) + t * t * (t - 1) * (1 / g0))
+    }
+    x0 = x
+    f0 = value
+    g0 = slope
+    let next = x + step
+    const wild = !(next > a && next < b) || Math.abs(step) > 0.7 * Math.abs(lastStep)
+    if (wild && !(i < 2 && next > a && next < b)) next = a > 0 && b > 4 * a ? Math.sqrt(a * b) : (a + b) / 2
+    if (next === x || b - a <= 2e-16 * Math.abs(b)) return a === low || b === high ? NaN : x
+    lastStep = next - x
+    x = next
+  }
+  return NaN
+}
