@@ -116,7 +116,7 @@ const PROPERTIES: readonly Property[] = [
     quantity: 'dynamic_viscosity',
     help: 'dynamic viscosity',
     of: (s, fluid) => fluid.viscosity_Pa_s(s),
-    example: at('viscosity', ''),
+    example: at('viscosity', '23.049 µPa s'),
     source: CORRELATION,
   },
   {
@@ -124,7 +124,7 @@ const PROPERTIES: readonly Property[] = [
     quantity: 'thermal_conductivity',
     help: 'thermal conductivity',
     of: (s, fluid) => fluid.conductivity_W_mK(s),
-    example: at('thermal_conductivity', ''),
+    example: at('thermal_conductivity', '0.037383 W/(m K)'),
     source: CORRELATION,
   },
 ]
