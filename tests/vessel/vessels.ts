@@ -33,7 +33,11 @@ export const LAYERS: Shell = {
   area_m2: 0.75,
 }
 
-export const ORIFICE: Path = { kind: 'orifice', diameter_m: 2.5e-3, dischargeCoefficient: 0.84 }
+export const ORIFICE: Extract<Path, { kind: 'orifice' }> = {
+  kind: 'orifice',
+  diameter_m: 2.5e-3,
+  dischargeCoefficient: 0.84,
+}
 
 export const header = (gas: Fluid, p_Pa = 300e5, T_K = 288.15): Supply => ({ kind: 'header', fluid: gas, p_Pa, T_K })
 

@@ -3,6 +3,7 @@ import { Dopri5 } from './dopri5'
 import { Rodas4 } from './rodas4'
 import { fallToZero } from './root'
 import type { OdeSystem, Stepper } from './system'
+import { turningPoint } from './turningPoint'
 
 export type Method = 'explicit' | 'stiff' | 'auto'
 
@@ -44,7 +45,7 @@ export interface Outcome {
 
 const SAFETY = 0.9
 const SHRINK = 0.2
-const GROW = 5
+const GROW = 8
 /** Memory of the last step's error in the step size (a PI controller): smooths the sequence of steps. */
 const MEMORY = 0.04
 const EVENT_TOLERANCE = 1e-12
@@ -67,6 +68,8 @@ class Integration {
   private readonly values: Float64Array
   private readonly valuesNew: Float64Array
   private readonly valuesAt: Float64Array
+  private readonly slopes: Float64Array
+  private readonly slopesNew: Float64Array
   private readonly point: Float64Array
   private readonly pointRates: Float64Array
   /** How far the system lets the next step go. */
@@ -86,6 +89,8 @@ class Integration {
     this.values = new Float64Array(system.events.length)
     this.valuesNew = new Float64Array(system.events.length)
     this.valuesAt = new Float64Array(system.events.length)
+    this.slopes = new Float64Array(system.events.length).fill(NaN)
+    this.slopesNew = new Float64Array(system.events.length).fill(NaN)
     this.point = new Float64Array(system.size)
     this.pointRates = new Float64Array(system.size)
   }
@@ -151,10 +156,12 @@ class Integration {
     stepper.accept()
     this.reach = system.longestStep?.() ?? Infinity
     system.eventValues(valuesNew)
-    const event = this.firstEvent()
+    system.eventRates?.(this.slopesNew)
+    const event = this.firstEvent(h)
     if (event.index < 0) {
       this.t = end
       values.set(valuesNew)
+      this.slopes.set(this.slopesNew)
     } else {
       this.t = from + event.theta * h
       stepper.dense(event.theta, this.point)
@@ -166,15 +173,21 @@ class Integration {
     return event.index
   }
 
-  private firstEvent(): { index: number; theta: number } {
+  private firstEvent(h: number): { index: number; theta: number } {
     const { values, valuesNew } = this
     let first = { index: -1, theta: 1 }
     for (let index = 0; index < values.length; index++) {
-      if (!(values[index] > 0 && valuesNew[index] <= 0)) continue
+      if (!(values[index] > 0)) continue
       const g = (theta: number) => this.eventAt(index, theta)
-      const atEnd = first.theta < 1 ? g(first.theta) : valuesNew[index]
+      let until = first.theta
+      let atEnd = until < 1 ? g(until) : valuesNew[index]
+      if (atEnd > 0 && this.slopes[index] < 0 && this.slopesNew[index] > 0) {
+        // It falls and rises again within the step: it may have been below zero between.
+        const dip = turningPoint(values[index], valuesNew[index], this.slopes[index] * h, this.slopesNew[index] * h)
+        if (dip < until) [until, atEnd] = [dip, g(dip)]
+      }
       if (atEnd > 0) continue
-      const theta = fallToZero(g, 0, values[index], first.theta, atEnd, EVENT_TOLERANCE)
+      const theta = fallToZero(g, 0, values[index], until, atEnd, EVENT_TOLERANCE)
       // Of two at once the one listed first counts.
       if (first.index < 0 || theta < first.theta * (1 - EVENT_TIE)) first = { index, theta }
     }
@@ -208,6 +221,7 @@ class Integration {
     this.stepper.reset(this.point, this.pointRates)
     this.reach = this.system.longestStep?.() ?? Infinity
     this.system.eventValues(this.values)
+    this.system.eventRates?.(this.slopes)
   }
 
   private goStiff() {
@@ -218,7 +232,7 @@ class Integration {
     this.stepper.reset(y, f)
   }
 
-  /** A step over which the solution changes by a hundredth of its scale, or the whole way where nothing changes. */
+  /** A step over which the solution changes by a twentieth of its scale, or the whole way where nothing changes. */
   private firstStep(): number {
     const { system, stepper, options } = this
     const scales = new Float64Array(system.size)
@@ -228,7 +242,7 @@ class Integration {
       fastest = Math.max(fastest, Math.abs(stepper.f[i]) / scales[i])
     }
     const rest = options.until - this.t
-    return fastest > 0 ? Math.min(rest, 0.01 / fastest) : rest
+    return fastest > 0 ? Math.min(rest, 0.05 / fastest) : rest
   }
 
   private outcome(status: Outcome['status'], event = -1): Outcome {

@@ -15,6 +15,8 @@ export interface OdeSystem {
   readonly events: readonly { readonly terminal: boolean }[]
   /** Event functions at the point of the last call of `rates`. An event happens where its value falls to zero. */
   eventValues(out: Float64Array): void
+  /** Their rates there, NaN where they are not known: they tell of an event that comes and goes within a step. */
+  eventRates?(out: Float64Array): void
   /** The longest step that makes sense from the point of the last call of `rates`. */
   longestStep?(): number
   /** Told where an event that is not terminal has happened, before the integration goes on from there. */

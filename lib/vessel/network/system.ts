@@ -7,6 +7,8 @@ import type { ControlVolume } from './volume'
 export interface Watch {
   readonly terminal: boolean
   value(): number
+  /** How fast it changes; NaN, or absent, where that is not known. */
+  rate?(): number
   /** What happens where it interrupts. */
   passed?(): void
 }
@@ -130,6 +132,10 @@ export class Network implements OdeSystem {
 
   eventValues(out: Float64Array) {
     for (let i = 0; i < this.events.length; i++) out[i] = this.events[i].value()
+  }
+
+  eventRates(out: Float64Array) {
+    for (let i = 0; i < this.events.length; i++) out[i] = this.events[i].rate?.() ?? NaN
   }
 
   passed(event: number) {

@@ -17,15 +17,30 @@ const COLD_MARGIN = 1e-5
 /** The stops of a run as they stand for this volume, which is where it starts. */
 export function watchesFor(volume: ControlVolume, connections: readonly Connection[], stops: Stops): NamedWatch[] {
   const watches: NamedWatch[] = []
-  const reach = (name: StoppedBy, target: number | undefined, value: () => number, scale = Math.abs(target ?? 1)) => {
+  const reach = (name: StoppedBy, target: number | undefined, value: () => number, rate = () => NaN) => {
     if (target === undefined) return
-    const side = value() <= target ? 1 : -1
-    watches.push({ name, terminal: true, value: () => (side * (target - value())) / scale - SHORT_OF })
+    const scale = (value() <= target ? 1 : -1) * (Math.abs(target) || 1)
+    watches.push({
+      name,
+      terminal: true,
+      value: () => (target - value()) / scale - SHORT_OF,
+      rate: () => -rate() / scale,
+    })
   }
-  reach('until_p', stops.until_p_Pa, () => volume.gas.p_Pa)
-  reach('until_T', stops.until_T_K, () => volume.gas.T_K)
+  reach(
+    'until_p',
+    stops.until_p_Pa,
+    () => volume.gas.p_Pa,
+    () => volume.dp_Pa_s,
+  )
+  reach(
+    'until_T',
+    stops.until_T_K,
+    () => volume.gas.T_K,
+    () => volume.dT_K_s,
+  )
   reach('until_m', stops.until_m_kg, () => volume.m_kg)
-  reach('until_x', stops.until_x, () => qualityOf(volume.gas.x), 1)
+  reach('until_x', stops.until_x, () => qualityOf(volume.gas.x))
   const { until_flow_kg_s: least } = stops
   if (least !== undefined) {
     const flow = () => Math.max(0, ...connections.map((connection) => Math.abs(connection.flow_kg_s)))

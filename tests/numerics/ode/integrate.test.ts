@@ -105,6 +105,18 @@ describe('events', () => {
     expect(t).toBeCloseTo(Math.LN2, 7)
   })
 
+  it('that come and go within a step are seen by their rates', () => {
+    const top = (12.3 * 12.3) / (2 * 9.81)
+    const near = {
+      terminal: true,
+      value: (y: Float64Array) => 0.999 * top - y[0],
+      rate: (y: Float64Array) => -y[1],
+    }
+    const { t, status } = integrate(thrown([near]), Float64Array.of(0, 12.3), { until: 2.4, rtol: 1e-6 })
+    expect(status).toBe('event')
+    expect(t).toBeCloseTo((12.3 - Math.sqrt(0.001) * 12.3) / 9.81, 9)
+  })
+
   it('at one moment count in the order listed', () => {
     const value = (y: Float64Array) => y[0] - 0.5
     const equations = system({

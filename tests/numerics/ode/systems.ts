@@ -13,6 +13,7 @@ interface Definition {
   readonly events?: readonly {
     readonly terminal: boolean
     readonly value: (y: Float64Array) => number
+    readonly rate?: (y: Float64Array) => number
     readonly passed?: () => void
   }[]
 }
@@ -33,6 +34,9 @@ export function system({ size, quadratures = 0, rates, scales, events = [] }: De
     scales: scales ?? ((out) => out.fill(1)),
     eventValues(out) {
       events.forEach((event, i) => (out[i] = event.value(at)))
+    },
+    eventRates(out) {
+      events.forEach((event, i) => (out[i] = event.rate?.(at) ?? NaN))
     },
     passed: (event) => events[event].passed?.(),
   }
