@@ -1,4 +1,4 @@
-import { STATES, cell, lineDown, liveState, openDemoSheet, reading, typeInto } from './support/sheet'
+import { STATES, cell, labelled, lineDown, liveState, openDemoSheet, reading, typeInto } from './support/sheet'
 import { expect, test } from './support/test'
 
 test('the demo works itself out: a quick fill runs hot, a slow one stays within', async ({ as }) => {
@@ -105,10 +105,10 @@ test('a state is typed at the end, branched, and taken away again', async ({ as 
   await expect(cell(page, STATES.quick + 1, 'label')).toContainText('Fill quick, what if')
   await expect(cell(page, STATES.quick + 1, 'p')).toHaveText('200.0')
   for (const label of ['Fill quick, what if', 'Second stand']) {
-    await page.locator('.ht_master td', { hasText: label }).click()
+    await labelled(page, label).click()
     await page.getByRole('button', { name: `More for ${label}` }).click()
     await page.getByRole('menuitem', { name: 'Delete state' }).click()
-    await expect(page.locator('.ht_master td', { hasText: label })).toHaveCount(0)
+    await expect(labelled(page, label)).toHaveCount(0)
   }
 })
 

@@ -16,12 +16,17 @@ export async function openDemoSheet(page: Page): Promise<void> {
 }
 
 export function cell(page: Page, state: number, column: Column): Locator {
+  // the frozen first column is drawn once more, over the grid: that copy is what a person sees and clicks
+  const pane = column === 'label' ? '.ht_clone_inline_start' : '.ht_master'
   return page
-    .locator('.ht_master tbody tr')
+    .locator(`${pane} tbody tr`)
     .nth(state - 1)
     .locator('td')
     .nth(COLUMNS.indexOf(column))
 }
+
+/** The cell with a state's label, by the label. */
+export const labelled = (page: Page, label: string) => page.locator('.ht_clone_inline_start td', { hasText: label })
 
 /** Types into a cell as a person does: over what stands there, then Enter. */
 export async function typeInto(page: Page, state: number, column: Column, text: string): Promise<void> {
