@@ -156,7 +156,8 @@ export class ControlVolume {
   passHeat(inflow_kg_s: number) {
     if (!this.film) return
     const { vessel, wall, gas, cells_K } = this
-    this.film.set(gas.x >= 0 && gas.x < 1 ? this.phaseOf(1) : gas, inflow_kg_s)
+    // In two phases it is the vapour that touches most of the wall, as a phase by itself.
+    this.film.set(gas.x >= 0 ? this.fluid.saturationAtT(gas.T_K).vapour : gas, inflow_kg_s)
     heatIn(this.film, wall.innerArea_m2, gas.T_K, cells_K[0], wall.innerResistance_K_W, this.inner)
     heatOut(
       vessel.outside,

@@ -93,9 +93,9 @@ export class IsentropicFlux {
   private choke(up: State): void {
     this.upP_Pa = up.p_Pa
     this.upH_J_kg = up.h_J_kg
-    this.frozen = false
-    if (!this.chokeFast(up) && !this.chokeByPressure(up)) {
-      this.frozen = true
+    // Where it was beyond the equation a moment ago the search over pressure finds that out at once.
+    this.frozen = !((!this.frozen && this.chokeFast(up)) || this.chokeByPressure(up))
+    if (this.frozen) {
       const exponent = isentropicExponent(up)
       this.chokedP_Pa = up.p_Pa * (2 / (exponent + 1)) ** (exponent / (exponent - 1))
       this.chokedG = frozenFlux(up, this.chokedP_Pa)

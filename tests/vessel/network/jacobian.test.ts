@@ -35,7 +35,7 @@ function charging(shell: Shell, inside: object) {
   const nitrogen = fluid('nitrogen')
   const from = filled(nitrogen, 50e5, vessel(shell, inside), 300)
   const volume = volumeFrom(
-    { ...from, shell: { ...from.shell, cells_K: from.shell.cells_K.map((T, i) => T + i) } },
+    { ...from, shell: { ...from.shell, cells_K: from.shell.cells_K.map((T, i) => T + 5 + i) } },
     'by_coefficients',
   )
   const reservoir = ofBoundary(new Reservoir(nitrogen, 300e5, 288))
@@ -48,7 +48,8 @@ function charging(shell: Shell, inside: object) {
 
 function twoVessels() {
   const nitrogen = fluid('nitrogen')
-  const a = filled(nitrogen, 40e5, vessel(LAYERS, jet))
+  const cool = filled(nitrogen, 40e5, vessel(LAYERS, jet))
+  const a = { ...cool, shell: { ...cool.shell, cells_K: cool.shell.cells_K.map((T, i) => T + 5 + i) } }
   const b = bank(nitrogen, 1, 90e5, vessel(LUMPED)).contents
   const volumes = [volumeFrom(a, 'by_coefficients'), volumeFrom(b, 'by_coefficients')]
   const way = {
