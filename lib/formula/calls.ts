@@ -1,13 +1,13 @@
 import { Problem } from '@/lib/errors'
 import type { Span } from '@/lib/errors'
 import type { Ast, ArgumentAst } from './ast'
-import { compileNode, guarded } from './compile'
-import type { Compiled, Context, Frame } from './compile'
+import { guarded } from './node'
+import type { Compiled, Context, Frame } from './node'
 import { parse } from './parse'
 import { meaningOf } from './names'
 import { suggestion } from './nearest'
 import { TEXT, fits, typeWords } from './typing'
-import type { FunctionSpec, Parameter, Type, Value, Vocabulary } from './types'
+import type { FunctionSpec, Parameter, Scope, Type, Value, Vocabulary } from './types'
 import { fault, isFault, isList } from './values'
 
 type CallAst = Extract<Ast, { type: 'call' }>
@@ -20,7 +20,7 @@ export function compileCall(ast: CallAst, context: Context): Compiled {
     throw new Problem('name', `there is no function ${ast.name}${meant}`, ast.nameSpan)
   }
   const given = assign(spec, ast, context)
-  const run = spec.lazy ? lazyRun(spec, given, ast.span) : eagerRun(spec, given, context.vocabulary, ast.span)
+  const run = spec.lazy ? lazyRun(spec, given, ast.span) : eagerRun(spec, given, context, ast.span)
   const words = `${spec.name}(…)`
   return { type: resultType(spec, given, ast.span), run, words, span: ast.span }
 }
@@ -52,7 +52,7 @@ function assign(spec: FunctionSpec, ast: CallAst, context: Context): Given {
   }
   for (const parameter of spec.parameters) {
     if (given.has(parameter)) continue
-    if (parameter.default !== undefined) given.set(parameter, [standIn(parameter, context.vocabulary)])
+    if (parameter.default !== undefined) given.set(parameter, [standIn(parameter, context)])
     else if (!parameter.optional)
       throw new Problem('argument', `${spec.name} needs ${parameter.name}: ${parameter.help}`, ast.span)
   }
@@ -85,10 +85,10 @@ function argumentNode(
   const { choices } = parameter
   const bare = ast.type === 'reference' && ast.target.by === 'name' && !ast.row && !ast.target.bracketed
   const word = bare ? ast.target.name : ast.type === 'text' ? ast.value : null
-  if (!choices || word === null) return compileNode(ast, context)
+  if (!choices || word === null) return context.node(ast, context)
   const choice = choices.find((candidate) => candidate.toLowerCase() === word.toLowerCase())
   if (choice !== undefined) return { type: TEXT, run: () => choice, words: choice, span: ast.span }
-  if (bare && meaningOf(word, false, context.scope).is !== 'nothing') return compileNode(ast, context)
+  if (bare && meaningOf(word, false, context.scope).is !== 'nothing') return context.node(ast, context)
   throw new Problem('argument', notAChoice(spec, parameter, word), ast.span)
 }
 
@@ -111,14 +111,15 @@ function checked(argument: Compiled, parameter: Parameter, spec: FunctionSpec, v
 }
 
 /** The formula that stands in for an argument that was left out. It is the table's own, so a mistake in it is ours. */
-function standIn(parameter: Parameter, vocabulary: Vocabulary): Compiled {
+function standIn(parameter: Parameter, around: Context): Compiled {
   const text = parameter.default!
   const { ast, problem } = parse(text)
   if (!ast) throw new Error(`the default of ${parameter.name} does not parse: ${problem.reason}`)
-  const context = { text, scope: { columns: [], rows: [], things: [] }, vocabulary, reads: [] }
-  return { ...compileNode(ast, context), span: NOWHERE }
+  const context: Context = { ...around, text, scope: NO_NAMES, reads: [] }
+  return { ...context.node(ast, context), span: NOWHERE }
 }
 
+const NO_NAMES: Scope = { columns: [], rows: [], things: [] }
 const NOWHERE: Span = { from: 0, to: 0 }
 const isWritten = (args: readonly Compiled[]) => args.every((argument) => argument.span !== NOWHERE)
 
@@ -142,12 +143,12 @@ function resultType(spec: FunctionSpec, given: Given, span: Span): Type {
   }
 }
 
-function eagerRun(spec: FunctionSpec, given: Given, vocabulary: Vocabulary, span: Span): Compiled['run'] {
+function eagerRun(spec: FunctionSpec, given: Given, context: Context, span: Span): Compiled['run'] {
   const parameters = [...given.entries()].map(([parameter, args]) => ({
     parameter,
     args,
     written: isWritten(args),
-    standIn: parameter.default === undefined ? null : standIn(parameter, vocabulary),
+    standIn: parameter.default === undefined ? null : standIn(parameter, context),
   }))
   return (frame) => {
     const args: Record<string, Value> = {}

@@ -1,39 +1,18 @@
 import { Problem } from '@/lib/errors'
 import type { Span } from '@/lib/errors'
-import { belowZero, power, toSI } from '@/lib/units'
-import type { Ast, BinaryOperator } from './ast'
+import { belowZero, toSI } from '@/lib/units'
+import type { Ast } from './ast'
+import { compileBinary } from './binary'
 import { compileCall } from './calls'
-import { compareValues, numericOperation } from './operators'
+import { suggestion } from './nearest'
+import { compiled, guarded, needed, quantityNode } from './node'
+import type { Compiled, Context, Frame } from './node'
 import { parse } from './parse'
 import { compileReference } from './references'
 import { bareCompoundUnit } from './syntax-reason'
-import { LOGICAL, NUMBER, TEXT, binaryType, derived, fits, literalType, typeWords } from './typing'
-import type { QuantityType } from './typing'
-import type { Compilation, Fault, Read, Scope, Surroundings, Type, Value, Vocabulary } from './types'
+import { NUMBER, TEXT, fits, literalType, typeWords } from './typing'
+import type { Compilation, Scope, Type, Value, Vocabulary } from './types'
 import { fault, isFault, isThing } from './values'
-
-/** What a compiled expression runs on. */
-export interface Frame {
-  readonly values: readonly Value[]
-  readonly surroundings: Surroundings
-}
-
-/** An expression that holds: its type, and how to work it out. */
-export interface Compiled {
-  readonly type: Type
-  readonly run: (frame: Frame) => Value
-  /** As it stands in the formula, for the words of an error. */
-  readonly words: string
-  readonly span: Span
-}
-
-/** What compiling needs to know, and what it gathers. */
-export interface Context {
-  readonly text: string
-  readonly scope: Scope
-  readonly vocabulary: Vocabulary
-  readonly reads: Read[]
-}
 
 export interface Expectation {
   readonly expected?: Type
@@ -53,16 +32,16 @@ export function compile(
 ): Compilation {
   const { ast, problem } = parse(text)
   if (!ast) return { ok: false, fault: fault('syntax', problem.reason, problem.span) }
-  const context: Context = { text, scope, vocabulary, reads: [] }
+  const context: Context = { text, scope, vocabulary, reads: [], node: compileNode }
   try {
-    const compiled = compileNode(ast, context)
-    expect(compiled, expectation, vocabulary)
+    const whole = compileNode(ast, context)
+    checkExpected(whole, expectation, vocabulary)
     return {
       ok: true,
-      type: compiled.type,
+      type: whole.type,
       reads: context.reads,
       literal: isLiteral(ast),
-      run: (values, surroundings) => finished(compiled.run({ values, surroundings }), ast.span),
+      run: (values, surroundings) => finished(whole.run({ values, surroundings }), ast.span),
     }
   } catch (mistake) {
     if (!(mistake instanceof Problem)) throw mistake
@@ -73,7 +52,7 @@ export function compile(
   }
 }
 
-function expect(
+function checkExpected(
   { type, span }: Compiled,
   { expected, expectedWords = 'this place' }: Expectation,
   vocabulary: Vocabulary,
@@ -97,62 +76,60 @@ function finished(value: Value, span: Span): Value {
   return value
 }
 
-export function compileNode(ast: Ast, context: Context): Compiled {
+function compileNode(ast: Ast, context: Context): Compiled {
   const { span } = ast
-  const words = context.text.slice(span.from, span.to)
   switch (ast.type) {
     case 'number':
-      return { type: NUMBER, run: () => ast.value, words, span }
+      return compiled(context, span, NUMBER, () => ast.value)
     case 'quantity':
-      return { ...reading(ast), words, span }
+      return compileQuantity(ast, context)
     case 'text':
-      return { type: TEXT, run: () => ast.value, words, span }
+      return compiled(context, span, TEXT, () => ast.value)
     case 'reference':
       return compileReference(ast, context)
     case 'call':
       return compileCall(ast, context)
     case 'field':
-      return compileField(ast, context, words)
+      return compileField(ast, context)
     case 'negative': {
-      const of = quantityNode(compileNode(ast.of, context), context)
+      const of = quantityNode(context.node(ast.of, context), context)
       if (of.type.scale === 'point')
         throw new Problem('dimension', `${of.words} is a reading on a scale: it has no negative`, span)
-      return { type: of.type, run: unary(of, (x) => -x), words, span }
+      return compiled(
+        context,
+        span,
+        of.type,
+        unary(of, (x) => -x),
+      )
     }
     case 'percent': {
-      const of = quantityNode(compileNode(ast.of, context), context)
+      const of = quantityNode(context.node(ast.of, context), context)
       if (!fits(of.type, NUMBER))
         throw new Problem('dimension', `${of.words} is no plain number: it cannot be a percentage`, span)
-      return { type: NUMBER, run: unary(of, (x) => x / 100), words, span }
+      return compiled(
+        context,
+        span,
+        NUMBER,
+        unary(of, (x) => x / 100),
+      )
     }
     case 'binary':
-      return compileBinary(ast, context, words)
+      return compileBinary(ast, context)
   }
 }
 
 /** A number with a unit. What a gauge reading comes to, and whether that can be, is known only where it is run. */
-function reading({ value, unit, span }: Extract<Ast, { type: 'quantity' }>): Pick<Compiled, 'type' | 'run'> {
+function compileQuantity({ value, unit, span }: Extract<Ast, { type: 'quantity' }>, context: Context): Compiled {
   const type = literalType(unit)
   const at = (ambient_Pa: number): Value => {
     const si = toSI(value, unit, ambient_Pa)
     const below = belowZero(si, value, unit)
     return below ? fault('range', below, span) : si
   }
-  if (unit.gauge) return { type, run: ({ surroundings }) => at(surroundings.p_Pa) }
+  if (unit.gauge) return compiled(context, span, type, ({ surroundings }) => at(surroundings.p_Pa))
   const si = at(0)
   if (isFault(si)) throw new Problem(si.fault, si.reason, span)
-  return { type, run: () => si }
-}
-
-/** The value of an expression where one is needed: an empty cell will not do. */
-export function needed(value: Value, of: Compiled): Value {
-  return value === null ? fault('argument', `${of.words} is empty`, of.span) : value
-}
-
-function quantityNode(node: Compiled, { vocabulary }: Context): Compiled & { readonly type: QuantityType } {
-  if (node.type.kind === 'quantity') return node as Compiled & { readonly type: QuantityType }
-  const is = typeWords(node.type, vocabulary)
-  throw new Problem('dimension', `${node.words} is ${is}: a number is needed here`, node.span)
+  return compiled(context, span, type, () => si)
 }
 
 function unary(of: Compiled, f: (x: number) => number): Compiled['run'] {
@@ -162,8 +139,8 @@ function unary(of: Compiled, f: (x: number) => number): Compiled['run'] {
   }
 }
 
-function compileField(ast: Extract<Ast, { type: 'field' }>, context: Context, words: string): Compiled {
-  const of = compileNode(ast.of, context)
+function compileField(ast: Extract<Ast, { type: 'field' }>, context: Context): Compiled {
+  const of = context.node(ast.of, context)
   const { type } = of
   if (type.kind !== 'thing') {
     throw new Problem(
@@ -175,12 +152,9 @@ function compileField(ast: Extract<Ast, { type: 'field' }>, context: Context, wo
   const spec = context.vocabulary.things.get(type.thing)
   const field = spec?.fields.find((candidate) => candidate.name === ast.field)
   if (!spec || !field) {
-    const known = spec?.fields.map((candidate) => candidate.name).join(', ')
-    throw new Problem(
-      'name',
-      `${spec?.words ?? type.thing} has no ${ast.field}${known ? `; it has ${known}` : ''}`,
-      ast.fieldSpan,
-    )
+    const known = spec?.fields.map((candidate) => candidate.name) ?? []
+    const meant = suggestion(ast.field, known) || (known.length > 0 ? `; it has ${known.join(', ')}` : '')
+    throw new Problem('name', `${spec?.words ?? type.thing} has no ${ast.field}${meant}`, ast.fieldSpan)
   }
   const run = (frame: Frame): Value => {
     const value = needed(of.run(frame), of)
@@ -188,113 +162,5 @@ function compileField(ast: Extract<Ast, { type: 'field' }>, context: Context, wo
     if (!isThing(value)) throw new Error(`${of.words} passed the check as a thing, but is none`)
     return guarded(() => field.get(value.value as never), ast.span)
   }
-  return { type: field.type, run, words, span: ast.span }
-}
-
-/** A user's mistake that is thrown in the numerics becomes a value here, with the place of the call. */
-export function guarded(work: () => Value, span: Span): Value {
-  try {
-    const value = work()
-    return typeof value === 'number' && !Number.isFinite(value)
-      ? fault('range', 'the result is no finite number', span)
-      : value
-  } catch (mistake) {
-    if (!(mistake instanceof Problem)) throw mistake
-    return fault(mistake.code, mistake.reason, mistake.span ?? span)
-  }
-}
-
-function compileBinary(ast: Extract<Ast, { type: 'binary' }>, context: Context, words: string): Compiled {
-  const left = compileNode(ast.left, context)
-  const right = compileNode(ast.right, context)
-  const type = typeOfBinary(ast, left, right, context)
-  const operate = operationFor(ast.operator, ast.span)
-  const run = (frame: Frame): Value => {
-    const a = needed(left.run(frame), left)
-    if (isFault(a)) return a
-    const b = needed(right.run(frame), right)
-    return isFault(b) ? b : operate(a, b)
-  }
-  return { type, run, words, span: ast.span }
-}
-
-function operationFor(operator: BinaryOperator, span: Span): (a: Value, b: Value) => Value | Fault {
-  switch (operator) {
-    case '&':
-      return (a, b) => `${String(a)}${String(b)}`
-    case '=':
-    case '<>':
-    case '<':
-    case '>':
-    case '<=':
-    case '>=':
-      return (a, b) => compareValues(operator, a, b)
-    default:
-      return (a, b) => numericOperation(operator, a as number, b as number, span)
-  }
-}
-
-function typeOfBinary(
-  { operator, span, right: rightAst }: Extract<Ast, { type: 'binary' }>,
-  left: Compiled,
-  right: Compiled,
-  context: Context,
-): Type {
-  const equality = operator === '=' || operator === '<>'
-  if (operator === '&') {
-    for (const side of [left, right]) {
-      if (side.type.kind !== 'text') {
-        throw new Problem(
-          'dimension',
-          `${side.words} is ${typeWords(side.type, context.vocabulary)}: & joins texts`,
-          side.span,
-        )
-      }
-    }
-    return TEXT
-  }
-  const plain = left.type.kind === 'text' || left.type.kind === 'logical'
-  if (plain && right.type.kind === left.type.kind && (equality || left.type.kind === 'text')) {
-    if (['=', '<>', '<', '>', '<=', '>='].includes(operator)) return LOGICAL
-  }
-  if (left.type.kind === 'thing' && right.type.kind === 'thing' && left.type.thing === right.type.thing && equality)
-    return LOGICAL
-  const [a, b] = [quantityNode(left, context), quantityNode(right, context)]
-  if (operator === '^') return powerType(a, rightAst, b)
-  try {
-    return binaryType(operator, a.type, b.type, { left: a.words, right: b.words })
-  } catch (mistake) {
-    throw mistake instanceof Problem ? new Problem(mistake.code, mistake.reason, span) : mistake
-  }
-}
-
-const HIGHEST_POWER = 99
-
-function powerType(base: Compiled & { readonly type: QuantityType }, exponentAst: Ast, exponent: Compiled): Type {
-  if (!fits(exponent.type, NUMBER))
-    throw new Problem('dimension', `${exponent.words} is no plain number: it cannot be an exponent`, exponent.span)
-  if (fits(base.type, NUMBER)) return NUMBER
-  const value = constantOf(exponentAst)
-  if (value === null) {
-    throw new Problem(
-      'dimension',
-      `${base.words} has a unit, so its exponent has to be a number that stands in the formula`,
-      exponent.span,
-    )
-  }
-  const dimension = power(base.type.dimension, value)
-  if (dimension.some((exponent) => Math.abs(exponent) > HIGHEST_POWER))
-    throw new Problem('dimension', `nothing is measured in such a power of ${base.words}`, exponent.span)
-  return derived(dimension)
-}
-
-function constantOf(ast: Ast): number | null {
-  if (ast.type === 'number') return ast.value
-  if (ast.type === 'negative') {
-    const of = constantOf(ast.of)
-    return of === null ? null : -of
-  }
-  if (ast.type !== 'binary' || ast.operator !== '/') return null
-  const [over, under] = [constantOf(ast.left), constantOf(ast.right)]
-  return over === null || under === null || under === 0 ? null : over / under
+  return compiled(context, ast.span, field.type, run)
 }

@@ -2,7 +2,8 @@ import { Problem } from '@/lib/errors'
 import { readUnit } from '@/lib/units'
 import type { RowAst, Target } from './ast'
 import { show } from './bind'
-import type { Compiled, Context } from './compile'
+import { compiled } from './node'
+import type { Compiled, Context } from './node'
 import { indexed, meaningOf, rowsLabelled } from './names'
 import { suggestion } from './nearest'
 import type { ReferenceAst } from './reference-syntax'
@@ -12,40 +13,40 @@ import { STARTS_FROM_NONE, fault, isFault } from './values'
 /** A name: a column (of this row or another), a thing of the rig, or a word of the language. */
 export function compileReference(ast: ReferenceAst, context: Context): Compiled {
   const found = resolve(ast.target, context)
-  const { span } = ast
-  const words = show(context.text.slice(span.from, span.to), context.scope)
-  if (found.is === 'word') {
-    refuseRow(ast.row, words)
-    return { type: found.type, run: () => found.value, words, span }
-  }
-  if (found.is === 'thing') {
-    refuseRow(ast.row, words)
-    return reading({ kind: 'thing', thing: found.id }, found.type, words, ast, context)
+  if (found.is !== 'column') {
+    refuseRow(ast, context)
+    return found.is === 'thing'
+      ? reading({ kind: 'thing', thing: found.id }, found.type, ast, context)
+      : compiled(context, ast.span, found.type, () => found.value)
   }
   const row = rowRef(ast.row, context)
   const type: Type = row.at === 'all' ? { kind: 'list', of: found.type } : found.type
-  return reading({ kind: 'cell', column: found.id, row }, type, words, ast, context)
+  return reading({ kind: 'cell', column: found.id, row }, type, ast, context)
 }
 
-function reading(read: Read, type: Type, words: string, { span }: ReferenceAst, { reads }: Context): Compiled {
+function refuseRow({ row, target }: ReferenceAst, { text, scope }: Context): void {
+  if (!row) return
+  const name = show(text.slice(target.span.from, target.span.to), scope)
+  throw new Problem('name', `${name} is no column: only a column can be asked for another state`, row.span)
+}
+
+function reading(read: Read, type: Type, { span }: ReferenceAst, context: Context): Compiled {
+  const { reads } = context
   const known = reads.findIndex((other) => JSON.stringify(other) === JSON.stringify(read))
   const index = known >= 0 ? known : reads.push(read) - 1
-  const run = ({ values }: { readonly values: readonly Value[] }): Value => {
+  const made: Compiled = compiled(context, span, type, ({ values }) => {
     const value = values[index]
-    if (value === null || !isFault(value)) return value
+    if (!isFault(value)) return value
     // a state that starts from none has no @from: that is said here, where it is asked for
-    if (value === STARTS_FROM_NONE) return fault('state', `${words}: ${value.reason}`, span)
-    return fault('dependency', `needs ${words}, which has an error`, span)
-  }
-  return { type, run, words, span }
-}
-
-function refuseRow(row: RowAst | null, words: string): void {
-  if (row) throw new Problem('name', `${words}: only a column can be asked for another state`, row.span)
+    if (value === STARTS_FROM_NONE) return fault('state', `${made.words}: ${value.reason}`, span)
+    return fault('dependency', `needs ${made.words}, which has an error`, span)
+  })
+  return made
 }
 
 type Resolved =
-  | { readonly is: 'column' | 'thing'; readonly id: string; readonly type: Type }
+  | { readonly is: 'column'; readonly id: string; readonly type: Type }
+  | { readonly is: 'thing'; readonly id: string; readonly type: Type }
   | { readonly is: 'word'; readonly type: Type; readonly value: Value }
 
 function resolve(target: Target, context: Context): Resolved {

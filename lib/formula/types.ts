@@ -58,7 +58,7 @@ export interface Parameter {
   readonly name: string
   readonly type: Type | readonly Type[]
   readonly optional?: boolean
-  /** A formula that stands in when the argument is left out. */
+  /** A formula that stands in when the argument is left out, or its cell is empty. */
   readonly default?: string
   /** May be given only by name. Arguments that are not named are given in the order of the table. */
   readonly named?: boolean
@@ -93,7 +93,7 @@ export interface FunctionSpec {
   readonly together?: (given: readonly string[]) => void
   /** Gets faults as arguments instead of passing the first on (iferror, count). */
   readonly takesFaults?: boolean
-  /** Arguments are handed over as functions to call when needed (if, iferror). */
+  /** Arguments are handed over as functions to call when needed (if, iferror); they may give a fault, or null for an empty cell. */
   readonly lazy?: boolean
   readonly evaluate: (args: Arguments, surroundings: Surroundings) => Value
   readonly evaluateLazy?: (args: Readonly<Record<string, (() => Value) | undefined>>) => Value
@@ -130,7 +130,8 @@ export interface Scope {
   readonly things: readonly { readonly id: string; readonly name: string; readonly type: Type }[]
   /**
    * The words of the language (see reservedWords): a name that is one of them is that word, so that no new name in a
-   * sheet changes what a formula means; the sheet's own thing of that name is written in brackets, [air].
+   * sheet changes what a formula means; the sheet's own thing of that name is written in brackets, [air]. Left out: the
+   * sheet's names go first.
    */
   readonly words?: ReadonlySet<string>
 }

@@ -82,8 +82,8 @@ const scalesClash = (a: Scale, b: Scale) =>
 
 /** Two quantities as their error names them. */
 export interface Operands {
-  readonly left: string
-  readonly right: string
+  readonly left: { readonly words: string }
+  readonly right: { readonly words: string }
 }
 
 export function binaryType(operator: BinaryOperator, left: QuantityType, right: QuantityType, words: Operands): Type {
@@ -107,7 +107,7 @@ function alike(left: QuantityType, right: QuantityType, words: Operands, done: s
   const clash = done === 'compared' && scalesClash(left.scale, right.scale)
   if (sameDimension(left.dimension, right.dimension) && !clash) return
   const [a, b] = [dimensionWords(left.dimension, left.scale), dimensionWords(right.dimension, right.scale)]
-  throw new Problem('dimension', `${words.left} is ${a} and ${words.right} is ${b}: they cannot be ${done}`)
+  throw new Problem('dimension', `${words.left.words} is ${a} and ${words.right.words} is ${b}: they cannot be ${done}`)
 }
 
 function sumType(operator: '+' | '-', left: QuantityType, right: QuantityType, words: Operands): Type {
@@ -122,7 +122,7 @@ function sumScale(left: QuantityType, right: QuantityType, words: Operands): Sca
     const what = isTemperature(left.dimension)
       ? 'two temperatures cannot be added: a difference is written in K, a mean is average(…)'
       : 'two gauge readings cannot be added'
-    throw new Problem('dimension', `${words.left} + ${words.right}: ${what}`)
+    throw new Problem('dimension', `${words.left.words} + ${words.right.words}: ${what}`)
   }
   if (scales.includes('point')) {
     if (scales.includes('ratio')) throw gaugeAndAbsolute(words)
@@ -138,24 +138,30 @@ function differenceScale(left: QuantityType, right: QuantityType, words: Operand
   if (b === 'point' || b === 'ratio') {
     if (a !== 'difference') return 'difference'
     const whole = dimensionWords(right.dimension, b)
-    throw new Problem('dimension', `${words.left} − ${words.right}: ${whole} cannot be taken from a difference`)
+    throw new Problem(
+      'dimension',
+      `${words.left.words} − ${words.right.words}: ${whole} cannot be taken from a difference`,
+    )
   }
   // 15 °C − 10 K is 5 °C, T − 300 K is −11.85 K: the same number either way, so what it is stays open
   return b === 'open' && a !== 'difference' ? 'open' : a
 }
 
 const gaugeAndAbsolute = (words: Operands) =>
-  new Problem('dimension', `${words.left} + ${words.right}: a gauge reading and an absolute pressure cannot be added`)
+  new Problem(
+    'dimension',
+    `${words.left.words} + ${words.right.words}: a gauge reading and an absolute pressure cannot be added`,
+  )
 
 function productType(operator: '*' | '/', left: QuantityType, right: QuantityType, words: Operands): Type {
-  for (const [type, name] of [
+  for (const [type, operand] of [
     [left, words.left],
     [right, words.right],
   ] as const) {
     if (type.scale === 'point' && !isTemperature(type.dimension)) {
       throw new Problem(
         'dimension',
-        `${name} is a gauge reading: it cannot be multiplied or divided; write it as an absolute pressure`,
+        `${operand.words} is a gauge reading: it cannot be multiplied or divided; write it as an absolute pressure`,
       )
     }
   }

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { compile } from '@/lib/formula'
+import { bind, compile } from '@/lib/formula'
 import type { Type } from '@/lib/formula'
 import { dimensionText } from '@/lib/units'
 import { SCOPE, VOCABULARY, faultOf, quantityType, valueOf } from './vocabulary'
@@ -102,9 +102,15 @@ describe('quantities that do not go together', () => {
     ['vessel.volume + 1 kg', 'vessel.volume is a volume and 1 kg is a mass: they cannot be added'],
     ['vessel > vessel@from', 'vessel is a tank: a number is needed here'],
     ['m.volume', 'm is a mass: it has no fields'],
+    [
+      '(p + 1 bar) * (p@[Fill quick] + p) + m',
+      '(p + 1 bar) * (p@[Fill quick] + p) is kg²/(m² s⁴) and m is a mass: they cannot be added',
+    ],
     ['vessel.mass', 'a tank has no mass; it has volume, mode'],
   ])('%s: %s', (text, reason) => {
     expect(faultOf(text).reason).toBe(reason)
+    // as it is kept, the formula holds identities: what is said of it is in names all the same
+    expect(faultOf(bind(text, SCOPE)).reason).toBe(reason)
   })
 
   it('should point at the part that is wrong', () => {

@@ -163,7 +163,7 @@ describe('mistakes as values', () => {
     ['2 * kg', 'name', 'kg is not known here; a unit stands behind a number: 5 kg'],
     ['p@9', 'name', 'there is no state 9'],
     ['p@[nowhere]', 'name', 'no state is called “nowhere”'],
-    ['[Tank A]@3', 'name', '[Tank A]@3: only a column can be asked for another state'],
+    ['[Tank A]@3', 'name', '[Tank A] is no column: only a column can be asked for another state'],
     ['$c:gone', 'deleted', 'the column this formula read was deleted'],
     ['$t:gone.volume', 'deleted', 'the thing of the rig this formula read was deleted'],
     ['p@$r:gone', 'deleted', 'the state this formula read was deleted'],
