@@ -3,7 +3,7 @@ import { parseCookie } from 'cookie'
 import type { Database } from '@/db/database'
 import { findSheet } from '@/db/queries/sheets'
 import { can, decide } from '@/lib/auth/policies'
-import { loadActor } from '@/lib/auth/server/actor'
+import { loadActor, loadActors } from '@/lib/auth/server/actor'
 import { readSession } from '@/lib/auth/server/session'
 import type { Environment } from '@/lib/env'
 import type { Person } from './connection'
@@ -22,7 +22,8 @@ export function isOwnOrigin(
   return new URL(origin).host === (forwarded ?? host)
 }
 
-export type Admission = { readonly person: Person; readonly expiresAt: Date } | { readonly refused: Close }
+export type Admission =
+  { readonly person: Person; readonly workspaceId: string; readonly expiresAt: Date } | { readonly refused: Close }
 
 /** Who asks to open a sheet, by the session in the request's cookies, and whether they may. */
 export async function admit(db: Database, request: IncomingMessage, sheetId: string): Promise<Admission> {
@@ -32,12 +33,18 @@ export async function admit(db: Database, request: IncomingMessage, sheetId: str
   const sheet = await findSheet(db, sheetId)
   const role = sheet && actor.roles.get(sheet.workspaceId)
   if (!role || !can(actor, 'sheet.read', sheet)) return { refused: CLOSE.notFound }
-  return { person: { userId: actor.id, name: actor.name, role }, expiresAt: session.expiresAt }
+  const { workspaceId } = sheet
+  return { person: { userId: actor.id, name: actor.name, role }, workspaceId, expiresAt: session.expiresAt }
 }
 
-/** Whether a person may change a sheet, as the database has it now. */
-export async function mayEdit(db: Database, sheetId: string, userId: string): Promise<boolean> {
-  return can(await loadActor(db, userId), 'sheet.edit', (await findSheet(db, sheetId)) ?? null)
+/** Those of some people who may change the sheets of a workspace, as the database has it now. */
+export async function editorsAmong(
+  db: Database,
+  workspaceId: string,
+  userIds: readonly string[],
+): Promise<ReadonlySet<string>> {
+  const actors = await loadActors(db, userIds)
+  return new Set(userIds.filter((id) => can(actors.get(id) ?? null, 'sheet.edit', { workspaceId })))
 }
 
 /** Why a person may not go on reading a sheet; null if they may. */

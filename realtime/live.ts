@@ -7,7 +7,7 @@ import { z } from 'zod'
 import type { OpenDatabase } from '@/db/database'
 import { listen } from '@/db/queries/notices'
 import type { Environment } from '@/lib/env'
-import { admit, isOwnOrigin, mayEdit, mayStay } from './authorize'
+import { admit, editorsAmong, isOwnOrigin, mayStay } from './authorize'
 import type { Person } from './connection'
 import { Connection } from './connection'
 import { sheetStore } from './persistence'
@@ -44,11 +44,11 @@ export async function openLive(open: OpenDatabase, environment: Environment, log
   // A message beyond our own limit is closed with a reason that browsers understand; only far beyond it ws steps in.
   const sockets = new WebSocketServer({ noServer: true, maxPayload: 2 * LIMITS.messageBytes, clientTracking: false })
   const rooms = new Rooms(
-    (sheetId) =>
+    ({ id, workspaceId }) =>
       Room.open({
-        store: sheetStore(db, sheetId),
-        mayEdit: (userId) => mayEdit(db, sheetId, userId),
-        log: log.child({ sheet: sheetId }),
+        store: sheetStore(db, id),
+        editorsAmong: (userIds) => editorsAmong(db, workspaceId, userIds),
+        log: log.child({ sheet: id }),
       }),
     log,
   )
@@ -90,8 +90,8 @@ export async function openLive(open: OpenDatabase, environment: Environment, log
         websocket.close(code, reason)
       })
     }
-    const { person, expiresAt } = admission
-    await rooms.enter(sheetId, (room) => {
+    const { person, workspaceId, expiresAt } = admission
+    await rooms.enter({ id: sheetId, workspaceId }, (room) => {
       if (closing) return refuse(socket, '503 Service Unavailable')
       sockets.handleUpgrade(request, socket, head, (websocket) => welcome(websocket, room, sheetId, person, expiresAt))
     })

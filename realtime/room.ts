@@ -13,8 +13,8 @@ import type { Close } from './protocol'
 
 export interface RoomParts {
   readonly store: RoomStore
-  /** Whether a person may change the sheet now: asked anew for each change. */
-  readonly mayEdit: (userId: string) => Promise<boolean>
+  /** Those of some people who may change the sheet now: asked anew whenever changes are worked off. */
+  readonly editorsAmong: (userIds: readonly string[]) => Promise<ReadonlySet<string>>
   readonly log: Logger
 }
 
@@ -29,6 +29,9 @@ type Verdict =
   | { readonly type: 'unusable' }
 
 const UNCHANGED: Verdict = { type: 'unchanged' }
+
+/** How many messages are worked off together: enough to keep up, few enough that nobody waits long for their answer. */
+const BATCH = 500
 
 const READ_ONLY = 'You can read this sheet but not change it. What you changed here was not kept.'
 const FULL = 'This sheet has reached the largest size that is kept. The change was not kept.'
@@ -139,7 +142,7 @@ export class Room {
 
   private async work(): Promise<void> {
     try {
-      while (this.inbox.length > 0 && !this.over) await this.workOff(this.inbox.splice(0))
+      while (this.inbox.length > 0 && !this.over) await this.workOff(this.inbox.splice(0, BATCH))
     } catch (error) {
       this.parts.log.error({ err: error }, 'a change could not be stored: the room is closed and opened anew')
       this.end(CLOSE.storage)
@@ -149,12 +152,13 @@ export class Room {
   }
 
   private async workOff(waiting: readonly Waiting[]): Promise<void> {
-    const rights = await this.rightsOf(waiting)
+    const senders = new Set(waiting.flatMap(({ from, frame }) => (frame.type === 'change' ? [from.person.userId] : [])))
+    const editors = senders.size > 0 ? await this.parts.editorsAmong([...senders]) : senders
     const changes: Change[] = []
     const dealtWith: Waiting[] = []
     for (const [i, { from, frame }] of waiting.entries()) {
       if (frame.type === 'change') {
-        const verdict = this.take(frame.update, rights.get(from.person.userId) ?? false)
+        const verdict = this.take(frame.update, editors.has(from.person.userId))
         if (verdict.type === 'unusable') {
           this.expel(from, CLOSE.malformed)
           await this.keep(changes)
@@ -174,13 +178,6 @@ export class Room {
     }
     await this.keep(changes)
     this.answer(dealtWith)
-  }
-
-  private async rightsOf(waiting: readonly Waiting[]): Promise<ReadonlyMap<string, boolean>> {
-    const people = new Set(waiting.flatMap(({ from, frame }) => (frame.type === 'change' ? [from.person.userId] : [])))
-    const rights = new Map<string, boolean>()
-    for (const userId of people) rights.set(userId, await this.parts.mayEdit(userId))
-    return rights
   }
 
   /** Applies a change to the document, if it may and can be. */

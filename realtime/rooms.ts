@@ -5,6 +5,12 @@ import type { Room } from './room'
 /** How long an empty room stays, for people who reload the page. */
 const LINGER_ms = 5_000
 
+/** What a room is of: a sheet never moves to another workspace. */
+export interface RoomSheet {
+  readonly id: string
+  readonly workspaceId: string
+}
+
 interface Entry {
   readonly room: Promise<Room>
   leaving: ReturnType<typeof setTimeout> | undefined
@@ -15,14 +21,15 @@ export class Rooms {
   private readonly entries = new Map<string, Entry>()
 
   constructor(
-    private readonly openRoom: (sheetId: string) => Promise<Room>,
+    private readonly openRoom: (sheet: RoomSheet) => Promise<Room>,
     private readonly log: Logger,
   ) {}
 
   /** Opens a sheet's room if need be, and calls `enter` while it is sure to stay. */
-  async enter(sheetId: string, enter: (room: Room) => void): Promise<void> {
+  async enter(sheet: RoomSheet, enter: (room: Room) => void): Promise<void> {
+    const sheetId = sheet.id
     for (;;) {
-      const entry = this.entryOf(sheetId)
+      const entry = this.entryOf(sheet)
       const room = await entry.room
       if (room.isOver) this.drop(sheetId, entry)
       // Dropped while it was waited for: another may be there already, and two rooms of one sheet must never be.
@@ -62,12 +69,12 @@ export class Rooms {
     )
   }
 
-  private entryOf(sheetId: string): Entry {
-    const there = this.entries.get(sheetId)
+  private entryOf(sheet: RoomSheet): Entry {
+    const there = this.entries.get(sheet.id)
     if (there) return there
-    const entry: Entry = { room: this.openRoom(sheetId), leaving: undefined }
-    this.entries.set(sheetId, entry)
-    entry.room.catch(() => this.drop(sheetId, entry))
+    const entry: Entry = { room: this.openRoom(sheet), leaving: undefined }
+    this.entries.set(sheet.id, entry)
+    entry.room.catch(() => this.drop(sheet.id, entry))
     return entry
   }
 

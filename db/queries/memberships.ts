@@ -1,21 +1,32 @@
-import { asc, eq } from 'drizzle-orm'
+import { asc, eq, inArray } from 'drizzle-orm'
 import type { Role } from '@/lib/auth/policies'
 import type { Database } from '../database'
-import { memberships, workspaces } from '../schema'
+import { memberships, users } from '../schema'
 
+/** A person in one of their workspaces; a person who belongs to none has one row without workspace and role. */
 export interface MembershipRow {
-  readonly workspaceId: string
-  readonly workspaceName: string
-  readonly role: Role
+  readonly userId: string
+  readonly name: string
+  readonly email: string
+  readonly demo: boolean
+  readonly workspaceId: string | null
+  readonly role: Role | null
 }
 
-/** The workspaces a person belongs to, the one they joined first leading. */
-export async function membershipsOf(db: Database, userId: string): Promise<readonly MembershipRow[]> {
+/** People and the workspaces they belong to, in one go; the workspace that each joined first leads. */
+export async function membershipsOf(db: Database, userIds: readonly string[]): Promise<readonly MembershipRow[]> {
   return db
-    .select({ workspaceId: memberships.workspaceId, workspaceName: workspaces.name, role: memberships.role })
-    .from(memberships)
-    .innerJoin(workspaces, eq(workspaces.id, memberships.workspaceId))
-    .where(eq(memberships.userId, userId))
+    .select({
+      userId: users.id,
+      name: users.name,
+      email: users.email,
+      demo: users.demo,
+      workspaceId: memberships.workspaceId,
+      role: memberships.role,
+    })
+    .from(users)
+    .leftJoin(memberships, eq(memberships.userId, users.id))
+    .where(inArray(users.id, [...userIds]))
     .orderBy(asc(memberships.createdAt), asc(memberships.workspaceId))
 }
 

@@ -4,11 +4,6 @@ import { users } from '../schema'
 
 export type UserRow = typeof users.$inferSelect
 
-export async function findUser(db: Database, id: string): Promise<UserRow | undefined> {
-  const [row] = await db.select().from(users).where(eq(users.id, id))
-  return row
-}
-
 /** Takes an address as it was typed. */
 export async function findUserByEmail(db: Database, email: string): Promise<UserRow | undefined> {
   const [row] = await db.select().from(users).where(eq(users.email, email.trim().toLowerCase()))

@@ -24,13 +24,17 @@ describe('people', () => {
     await expect(addUser(test.db, { ...account, email: 'TWICE@test.example' })).rejects.toThrow()
   })
 
-  it('lists the workspaces of a person, and nobody else’s', async () => {
+  it('lists people with their workspaces, and nobody else’s', async () => {
     const workspace = await makeWorkspace(test.db)
     const engineer = await makeMember(test.db, workspace.id, 'engineer')
     await makeMember(test.db, workspace.id, 'viewer')
-    expect(await membershipsOf(test.db, engineer.id)).toEqual([
-      { workspaceId: workspace.id, workspaceName: workspace.name, role: 'engineer' },
+    const loner = await makeUser(test.db)
+    const rows = await membershipsOf(test.db, [engineer.id, loner.id, crypto.randomUUID()])
+    expect(rows.map(({ userId, workspaceId, role }) => ({ userId, workspaceId, role }))).toEqual([
+      { userId: engineer.id, workspaceId: workspace.id, role: 'engineer' },
+      { userId: loner.id, workspaceId: null, role: null },
     ])
+    expect(rows[0]).toMatchObject({ name: engineer.name, email: engineer.email, demo: false })
   })
 })
 

@@ -57,7 +57,8 @@ let clients: WebSocket[]
 
 beforeEach(async () => {
   store = new SlowStore()
-  room = await Room.open({ store, mayEdit: async (userId) => userId !== 'viewer', log: pino({ level: 'silent' }) })
+  const editorsAmong = async (userIds: readonly string[]) => new Set(userIds)
+  room = await Room.open({ store, editorsAmong, log: pino({ level: 'silent' }) })
   const server = createServer()
   sockets = new WebSocketServer({ server })
   clients = []

@@ -14,11 +14,12 @@ class FakeRoom {
   close = async () => void (this.closed = true)
 }
 
+const SHEET = { id: 'sheet', workspaceId: 'workspace' }
 let opened: FakeRoom[]
 let rooms: Rooms
 const enter = async (): Promise<FakeRoom> => {
   let entered: FakeRoom | undefined
-  await rooms.enter('sheet', (room) => {
+  await rooms.enter(SHEET, (room) => {
     entered = room as unknown as FakeRoom
     entered.size++
   })
@@ -26,7 +27,7 @@ const enter = async (): Promise<FakeRoom> => {
 }
 const leave = (room: FakeRoom) => {
   room.size--
-  rooms.left('sheet')
+  rooms.left(SHEET.id)
 }
 
 beforeEach(() => {
@@ -97,8 +98,8 @@ describe('the rooms of a process', () => {
         .mockResolvedValueOnce(new FakeRoom() as unknown as Room),
       pino({ level: 'silent' }),
     )
-    await expect(failing.enter('sheet', () => undefined)).rejects.toThrow('no database')
-    await expect(failing.enter('sheet', () => undefined)).resolves.toBeUndefined()
+    await expect(failing.enter(SHEET, () => undefined)).rejects.toThrow('no database')
+    await expect(failing.enter(SHEET, () => undefined)).resolves.toBeUndefined()
   })
 
   it('are all closed at the end', async () => {
