@@ -14,6 +14,7 @@ import { Avatar, PEOPLE_COLOURS } from '../ui/avatar'
 import { Button } from '../ui/button'
 import { Caution } from './caution'
 import { ColumnTools } from './column-tools'
+import { ExportButton } from './export-button'
 import { FormulaLine } from './formula-line'
 import type { Peer } from './live-connection'
 import { LiveBanner, LivePill } from './live-pill'
@@ -89,12 +90,20 @@ function OpenedSheet({
       title={title}
       status={<LivePill live={live} working={view.working} />}
       actions={
-        <div className="flex" aria-label="Who is here" role="group">
-          <Avatar initials={me.initials} name={`${me.name} (you)`} colour={7} />
-          {onePerPerson(live.peers).map((peer) => (
-            <Avatar key={peer.user.id} initials={peer.user.initials} name={peer.user.name} colour={peer.user.colour} />
-          ))}
-        </div>
+        <>
+          <div className="flex" aria-label="Who is here" role="group">
+            <Avatar initials={me.initials} name={`${me.name} (you)`} colour={7} />
+            {onePerPerson(live.peers).map((peer) => (
+              <Avatar
+                key={peer.user.id}
+                initials={peer.user.initials}
+                name={peer.user.name}
+                colour={peer.user.colour}
+              />
+            ))}
+          </div>
+          <ExportButton title={title} session={session} />
+        </>
       }
     />
   )
