@@ -1,4 +1,4 @@
-import { compile } from '@/lib/formula'
+import { compile, show } from '@/lib/formula'
 import type { Compilation, Scope, Type, Vocabulary } from '@/lib/formula'
 
 /** What a formula has to give, and the words for it in an error: "the column Pressure". */
@@ -109,9 +109,9 @@ function signature(compilation: Compilation, scope: Scope): string {
   if (!compilation.ok) return JSON.stringify(compilation.fault)
   const reads = compilation.reads.map((read) => {
     if (read.kind === 'thing') return [read, scope.things.find((thing) => thing.id === read.thing)]
-    const row = read.row.at === 'row' ? read.row.row : null
-    const place = scope.rows.findIndex((candidate) => candidate.id === row)
-    return [read, scope.columns.find((column) => column.id === read.column), row && [place, scope.rows[place]?.label]]
+    // an error names the state it came from by its label, or by its number where another one has that label
+    const named = read.row.at === 'row' && show(`$c:${read.column}@$r:${read.row.row}`, scope)
+    return [read, scope.columns.find((column) => column.id === read.column), named]
   })
   return JSON.stringify([compilation.type, reads])
 }
