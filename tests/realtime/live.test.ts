@@ -1,11 +1,12 @@
 import fc from 'fast-check'
-import { afterAll, afterEach, beforeAll, beforeEach, describe, expect, it, vi } from 'vitest'
+import { afterAll, afterEach, beforeAll, beforeEach, describe, expect, it } from 'vitest'
 import * as Y from 'yjs'
 import { loadDocument } from '@/db/queries/sheet-documents'
 import { deleteSheet } from '@/lib/workspace/server/delete-sheet'
 import { TAIL_UPDATES } from '@/realtime/persistence'
 import { LIMITS, MESSAGE } from '@/realtime/protocol'
 import { testDatabase } from '../support/database'
+import { comesToRest, eventually } from '../support/eventually'
 import { changeRole, makeSheet, removeMember } from '../support/factories'
 import { browser, HandMade, outcomeOf, startLive } from '../support/liveServer'
 import type { Browser, LiveServer } from '../support/liveServer'
@@ -32,7 +33,7 @@ afterEach(() => {
 async function join(userId: string, doc?: Y.Doc): Promise<Browser> {
   const client = await browser(server, world.sheet.id, userId, doc)
   open.push(client)
-  await vi.waitFor(() => expect(client.provider.synced).toBe(true))
+  await eventually(() => expect(client.provider.synced).toBe(true))
   return client
 }
 
@@ -40,7 +41,7 @@ async function handMade(userId: string): Promise<HandMade> {
   const client = await HandMade.connect(server, world.sheet.id, { userId })
   open.push(client)
   client.send(step1Message())
-  await vi.waitFor(() => expect(client.syncs).toBeGreaterThanOrEqual(2))
+  await eventually(() => expect(client.syncs).toBeGreaterThanOrEqual(2))
   return client
 }
 
@@ -95,7 +96,7 @@ describe('editing together', () => {
     typeInto(engineer.doc, 'r1/p', '200 bar')
     typeInto(lead.doc, 'r2/p', '5 bar')
     const both = { 'r1/p': '200 bar', 'r2/p': '5 bar' }
-    await vi.waitFor(() => {
+    await eventually(() => {
       for (const { doc } of [engineer, lead, viewer]) expect(cellsOf(doc)).toEqual(both)
     })
     expect(await stored()).toEqual(both)
@@ -109,14 +110,14 @@ describe('editing together', () => {
     typeInto(engineer.doc, 'r2/p', '3 bar')
     const lead = await join(world.lead.id)
     engineer.provider.connect()
-    await vi.waitFor(() => expect(cellsOf(lead.doc)).toEqual({ 'r1/p': '2 bar', 'r2/p': '3 bar' }))
+    await eventually(() => expect(cellsOf(lead.doc)).toEqual({ 'r1/p': '2 bar', 'r2/p': '3 bar' }))
   })
 
   it('says how many changes of a connection are stored', async () => {
     const engineer = await handMade(world.engineer.id)
     const doc = new Y.Doc()
     for (const value of ['1', '2', '3']) engineer.send(updateMessage(typeInto(doc, 'r1/p', value)))
-    await vi.waitFor(() => expect(engineer.saved).toBe(3))
+    await eventually(() => expect(engineer.saved).toBe(3))
     expect(await stored()).toEqual({ 'r1/p': '3' })
   })
 
@@ -124,12 +125,12 @@ describe('editing together', () => {
     const engineer = await join(world.engineer.id)
     typeInto(engineer.doc, 'r1/p', '1 bar')
     typeInto(engineer.doc, 'r1/p', '2 bar')
-    await vi.waitFor(async () => expect(await stored()).toEqual({ 'r1/p': '2 bar' }))
+    await eventually(async () => expect(await stored()).toEqual({ 'r1/p': '2 bar' }))
     const { sequence } = await loadDocument(test.db, world.sheet.id)
     const again = await handMade(world.engineer.id)
     again.send(step2Message(Y.encodeStateAsUpdate(engineer.doc)))
     again.send(updateMessage(Y.encodeStateAsUpdate(engineer.doc)))
-    await vi.waitFor(() => expect(again.saved).toBe(1))
+    await eventually(() => expect(again.saved).toBe(1))
     expect((await loadDocument(test.db, world.sheet.id)).sequence).toBe(sequence)
   })
 
@@ -140,7 +141,7 @@ describe('editing together', () => {
     const [first, second] = [typeInto(doc, 'r1/p', '1'), typeInto(doc, 'r2/p', '2')]
     engineer.send(updateMessage(second))
     engineer.send(updateMessage(first))
-    await vi.waitFor(() => expect(cellsOf(lead.doc)).toEqual({ 'r1/p': '1', 'r2/p': '2' }))
+    await eventually(() => expect(cellsOf(lead.doc)).toEqual({ 'r1/p': '1', 'r2/p': '2' }))
     expect(await stored()).toEqual({ 'r1/p': '1', 'r2/p': '2' })
   })
 })
@@ -154,11 +155,11 @@ describe('a viewer', () => {
     const other = new Y.Doc()
     typeInto(other, 'r2/p', '999 bar')
     viewer.send(step2Message(Y.encodeStateAsUpdate(other)))
-    await vi.waitFor(() => expect(viewer.refusals).toHaveLength(2))
+    await eventually(() => expect(viewer.refusals).toHaveLength(2))
     expect(viewer.refusals[0]).toMatch(/read this sheet but not change it/)
     expect(viewer.saved).toBe(0)
     typeInto(engineer.doc, 'r3/p', '1 bar')
-    await vi.waitFor(() => expect(cellsOf(viewer.doc)).toEqual({ 'r3/p': '1 bar' }))
+    await eventually(() => expect(cellsOf(viewer.doc)).toEqual({ 'r3/p': '1 bar' }))
     expect(cellsOf(engineer.doc)).toEqual({ 'r3/p': '1 bar' })
     expect(await stored()).toEqual({ 'r3/p': '1 bar' })
     expect(viewer.closed).toBeUndefined()
@@ -168,25 +169,25 @@ describe('a viewer', () => {
     const engineer = await join(world.engineer.id)
     typeInto(engineer.doc, 'r1/p', '1 bar')
     typeInto(engineer.doc, 'r1/p', '2 bar')
-    await vi.waitFor(async () => expect(await stored()).toEqual({ 'r1/p': '2 bar' }))
+    await eventually(async () => expect(await stored()).toEqual({ 'r1/p': '2 bar' }))
     const viewer = await handMade(world.viewer.id)
     viewer.send(step2Message(Y.encodeStateAsUpdate(viewer.doc)))
     viewer.send(updateMessage(typeInto(new Y.Doc(), 'r2/p', '999')))
-    await vi.waitFor(() => expect(viewer.refusals).toHaveLength(1))
+    await eventually(() => expect(viewer.refusals).toHaveLength(1))
   })
 
   it('is one from the moment the role is changed, in an open connection', async () => {
     const engineer = await handMade(world.engineer.id)
     const doc = new Y.Doc()
     engineer.send(updateMessage(typeInto(doc, 'r1/p', '1')))
-    await vi.waitFor(() => expect(engineer.saved).toBe(1))
+    await eventually(() => expect(engineer.saved).toBe(1))
     await changeRole(test.db, world.workspace.id, world.engineer.id, 'viewer')
     engineer.send(updateMessage(typeInto(doc, 'r1/p', '2')))
-    await vi.waitFor(() => expect(engineer.refusals).toHaveLength(1))
+    await eventually(() => expect(engineer.refusals).toHaveLength(1))
     expect(await stored()).toEqual({ 'r1/p': '1' })
     await removeMember(test.db, world.workspace.id, world.engineer.id)
     engineer.send(updateMessage(typeInto(doc, 'r1/p', '3')))
-    await vi.waitFor(() => expect(engineer.refusals).toHaveLength(2))
+    await eventually(() => expect(engineer.refusals).toHaveLength(2))
     expect(await stored()).toEqual({ 'r1/p': '1' })
   })
 })
@@ -195,7 +196,7 @@ describe('being shut out', () => {
   it('a deleted sheet closes for everyone who has it open', async () => {
     const [engineer, viewer] = [await handMade(world.engineer.id), await handMade(world.viewer.id)]
     await deleteSheet(world.lead, { sheetId: world.sheet.id })
-    await vi.waitFor(() => expect([engineer.closed?.code, viewer.closed?.code]).toEqual([4404, 4404]))
+    await eventually(() => expect([engineer.closed?.code, viewer.closed?.code]).toEqual([4404, 4404]))
   })
 
   it('a session that lasts longer than a timer can wait stays', async () => {
@@ -210,7 +211,7 @@ describe('being shut out', () => {
 
   it('a session that runs out closes', async () => {
     const client = await HandMade.connect(server, world.sheet.id, { userId: world.lead.id, sessionSeconds: 1 })
-    await vi.waitFor(() => expect(client.closed?.code).toBe(4401), { timeout: 5000 })
+    await eventually(() => expect(client.closed?.code).toBe(4401))
   })
 })
 
@@ -218,12 +219,10 @@ describe('what is kept', () => {
   it('is there after the server was started anew', async () => {
     const own = await startLive(test.open)
     const engineer = await browser(own, world.sheet.id, world.engineer.id)
-    await vi.waitFor(() => expect(engineer.provider.synced).toBe(true))
+    await eventually(() => expect(engineer.provider.synced).toBe(true))
     typeInto(engineer.doc, 'r1/p', '7 bar')
     const watching = await browser(own, world.sheet.id, world.viewer.id)
-    await vi.waitFor(() => expect(cellsOf(watching.doc)).toEqual({ 'r1/p': '7 bar' }))
-    const closed = vi.fn()
-    engineer.provider.on('connection-close', closed)
+    await eventually(() => expect(cellsOf(watching.doc)).toEqual({ 'r1/p': '7 bar' }))
     await own.close()
     expect(await stored()).toEqual({ 'r1/p': '7 bar' })
     engineer.close()
@@ -237,9 +236,9 @@ describe('what is kept', () => {
     const count = TAIL_UPDATES + 5
     for (let i = 1; i <= count; i++) {
       engineer.send(updateMessage(typeInto(doc, 'r1/p', `${i}`)))
-      if (i % 100 === 0) await vi.waitFor(() => expect(engineer.saved).toBe(i))
+      if (i % 100 === 0) await eventually(() => expect(engineer.saved).toBe(i))
     }
-    await vi.waitFor(() => expect(engineer.saved).toBe(count))
+    await eventually(() => expect(engineer.saved).toBe(count))
     const { state, tail, sequence } = await loadDocument(test.db, world.sheet.id)
     expect(sequence).toBe(count)
     expect(state).not.toBeNull()
@@ -268,9 +267,9 @@ describe('messages that are none', () => {
     const lead = await join(world.lead.id)
     const sender = await handMade(world.engineer.id)
     sender.send(message)
-    await vi.waitFor(() => expect(sender.closed?.code).toBe(4400))
+    await eventually(() => expect(sender.closed?.code).toBe(4400))
     typeInto(lead.doc, 'r1/p', 'still here')
-    await vi.waitFor(async () => expect(await stored()).toEqual({ 'r1/p': 'still here' }))
+    await eventually(async () => expect(await stored()).toEqual({ 'r1/p': 'still here' }))
     expect(lead.provider.wsconnected).toBe(true)
   })
 
@@ -280,10 +279,10 @@ describe('messages that are none', () => {
     const foreign = new Y.Doc()
     foreign.getText('diary').insert(0, 'not a sheet')
     sender.send(updateMessage(Y.encodeStateAsUpdate(foreign)))
-    await vi.waitFor(() => expect(sender.closed?.code).toBe(4400))
+    await eventually(() => expect(sender.closed?.code).toBe(4400))
     typeInto(lead.doc, 'r1/p', 'still here')
     const viewer = await join(world.viewer.id)
-    await vi.waitFor(() => expect(cellsOf(viewer.doc)).toEqual({ 'r1/p': 'still here' }))
+    await eventually(() => expect(cellsOf(viewer.doc)).toEqual({ 'r1/p': 'still here' }))
     expect([...viewer.doc.share.keys()]).not.toContain('diary')
     expect((await loadDocument(test.db, world.sheet.id)).sequence).toBe(1)
   })
@@ -302,7 +301,7 @@ describe('messages that are none', () => {
           const sender = await handMade(world.engineer.id)
           sender.send(bytes)
           sender.send(frame(MESSAGE.queryAwareness))
-          await vi.waitFor(() => expect(sender.closed ?? sender.presence.length).toBeTruthy())
+          await eventually(() => expect(sender.closed ?? sender.presence.length).toBeTruthy())
           sender.close()
         },
       ),
@@ -310,19 +309,19 @@ describe('messages that are none', () => {
     )
     typeInto(lead.doc, 'r2/p', '2 bar')
     const viewer = await join(world.viewer.id)
-    await vi.waitFor(() => expect(cellsOf(viewer.doc)).toMatchObject({ 'r1/p': '1 bar', 'r2/p': '2 bar' }))
+    await eventually(() => expect(cellsOf(viewer.doc)).toMatchObject({ 'r1/p': '1 bar', 'r2/p': '2 bar' }))
   })
 
   it('too large a message closes with a code that browsers do not come back from', async () => {
     const sender = await handMade(world.engineer.id)
     sender.send(new Uint8Array(LIMITS.messageBytes + 1))
-    await vi.waitFor(() => expect(sender.closed?.code).toBe(4413))
+    await eventually(() => expect(sender.closed?.code).toBe(4413))
   })
 
   it('too many messages at once close', async () => {
     const sender = await handMade(world.engineer.id)
     for (let i = 0; i <= LIMITS.burst + LIMITS.perSecond; i++) sender.send(frame(MESSAGE.queryAwareness))
-    await vi.waitFor(() => expect(sender.closed?.code).toBe(4529))
+    await eventually(() => expect(sender.closed?.code).toBe(4529))
   })
 })
 
@@ -334,7 +333,7 @@ describe('presence', () => {
     const engineer = await handMade(world.engineer.id)
     const user = { id: world.lead.id, name: 'The Boss', initials: 'TB', role: 'lead', colour: 99 }
     engineer.send(awarenessMessage({ clientId: 7, state: { cell, editing: true, user, extra: 'x'.repeat(10) } }))
-    await vi.waitFor(() => expect(lead.presence).toHaveLength(1))
+    await eventually(() => expect(lead.presence).toHaveLength(1))
     const { id, name } = world.engineer
     expect(lead.presence[0]!.state).toEqual({
       cell,
@@ -342,7 +341,7 @@ describe('presence', () => {
       user: { id, name, initials: expect.stringMatching(/^P/) as string, role: 'engineer', colour: 1 },
     })
     const late = await handMade(world.viewer.id)
-    await vi.waitFor(() => expect(late.presence.map((entry) => entry.clientId)).toEqual([7]))
+    await eventually(() => expect(late.presence.map((entry) => entry.clientId)).toEqual([7]))
   })
 
   it('nobody speaks for somebody else, nor for two', async () => {
@@ -350,11 +349,11 @@ describe('presence', () => {
     const lead = await handMade(world.lead.id)
     const engineer = await handMade(world.engineer.id)
     lead.send(awarenessMessage({ clientId: 1, state: { cell } }))
-    await vi.waitFor(() => expect(watching.presence).toHaveLength(1))
+    await eventually(() => expect(watching.presence).toHaveLength(1))
     engineer.send(awarenessMessage({ clientId: 1, clock: 9, state: null }, { clientId: 2, state: { cell: null } }))
     engineer.send(awarenessMessage({ clientId: 3, state: { cell } }, { clientId: 1, clock: 99, state: { cell: null } }))
     engineer.send(awarenessMessage({ clientId: 2, clock: 2, state: { cell } }))
-    await vi.waitFor(() => expect(watching.presence).toHaveLength(3))
+    await eventually(() => expect(watching.presence).toHaveLength(3))
     expect(watching.presence.map(({ clientId, state }) => [clientId, (state as { cell: unknown }).cell])).toEqual([
       [1, cell],
       [2, null],
@@ -366,9 +365,9 @@ describe('presence', () => {
     const watching = await handMade(world.viewer.id)
     const engineer = await handMade(world.engineer.id)
     engineer.send(awarenessMessage({ clientId: 5, state: { cell } }))
-    await vi.waitFor(() => expect(watching.presence).toHaveLength(1))
+    await eventually(() => expect(watching.presence).toHaveLength(1))
     engineer.close()
-    await vi.waitFor(() => expect(watching.presence).toHaveLength(2))
+    await eventually(() => expect(watching.presence).toHaveLength(2))
     expect(watching.presence[1]).toMatchObject({ clientId: 5, state: null })
     expect(watching.presence[1]!.clock).toBeGreaterThan(watching.presence[0]!.clock)
   })
@@ -377,26 +376,23 @@ describe('presence', () => {
     const windows = await Promise.all([1, 2, 3, 4].map(() => join(world.engineer.id)))
     const watching = await handMade(world.viewer.id)
     for (const { provider } of windows) provider.awareness.setLocalState({ cell })
-    await vi.waitFor(() => {
+    await eventually(() => {
       const clients = new Set(watching.presence.flatMap(({ clientId, state }) => (state ? [clientId] : [])))
       expect(clients).toEqual(new Set(windows.map(({ doc }) => doc.clientID)))
     })
-    await new Promise((resolve) => setTimeout(resolve, 300))
-    const heard = watching.presence.length
-    await new Promise((resolve) => setTimeout(resolve, 300))
-    expect(watching.presence.length).toBe(heard)
+    await comesToRest(() => watching.presence.length)
   })
 
   it('of a browser whose old connection still hangs is taken over, and stays when that one goes', async () => {
     const watching = await handMade(world.viewer.id)
     const [old, back] = [await handMade(world.engineer.id), await handMade(world.engineer.id)]
     old.send(awarenessMessage({ clientId: 5, state: { cell: null } }))
-    await vi.waitFor(() => expect(watching.presence).toHaveLength(1))
+    await eventually(() => expect(watching.presence).toHaveLength(1))
     back.send(awarenessMessage({ clientId: 5, state: { cell } }))
-    await vi.waitFor(() => expect(watching.presence).toHaveLength(2))
+    await eventually(() => expect(watching.presence).toHaveLength(2))
     old.close()
     back.send(awarenessMessage({ clientId: 5, state: { cell, editing: true } }))
-    await vi.waitFor(() => expect(watching.presence).toHaveLength(3))
+    await eventually(() => expect(watching.presence).toHaveLength(3))
     expect(watching.presence.map(({ state }) => state)).toMatchObject([{ cell: null }, { cell }, { editing: true }])
   })
 
@@ -404,10 +400,10 @@ describe('presence', () => {
     const [watching, engineer] = [await join(world.viewer.id), await join(world.engineer.id)]
     const seen = () => watching.provider.awareness.getStates().get(engineer.doc.clientID)
     engineer.provider.awareness.setLocalState({ cell })
-    await vi.waitFor(() => expect(seen()).toMatchObject({ cell, user: { id: world.engineer.id } }))
+    await eventually(() => expect(seen()).toMatchObject({ cell, user: { id: world.engineer.id } }))
     engineer.provider.disconnect()
-    await vi.waitFor(() => expect(seen()).toBeUndefined())
+    await eventually(() => expect(seen()).toBeUndefined())
     engineer.provider.connect()
-    await vi.waitFor(() => expect(seen()).toMatchObject({ cell }))
+    await eventually(() => expect(seen()).toMatchObject({ cell }))
   })
 })

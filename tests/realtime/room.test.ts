@@ -9,6 +9,7 @@ import { Connection } from '@/realtime/connection'
 import type { RoomStore } from '@/realtime/persistence'
 import { CLOSE } from '@/realtime/protocol'
 import { Room } from '@/realtime/room'
+import { eventually } from '../support/eventually'
 import { cellsOf, step1Message, typeInto, updateMessage } from '../support/wire'
 
 /** A store that waits for leave before each write, and counts what it was asked to keep. */
@@ -93,7 +94,7 @@ async function enter(userId: string) {
     if (data[0] === 0 && data[1] !== 0) Y.applyUpdate(doc, new Uint8Array(data.subarray(3)))
   })
   socket.on('close', (code) => (seen.closed = code))
-  await vi.waitFor(() => expect(seen.heard).toBeGreaterThanOrEqual(2))
+  await eventually(() => expect(seen.heard).toBeGreaterThanOrEqual(2))
   return seen
 }
 
@@ -104,7 +105,7 @@ describe('a room', () => {
   it('shows a change to nobody before it is stored, not even to one who comes in meanwhile', async () => {
     const [engineer, other] = [await enter('engineer'), await enter('other')]
     engineer.send(updateMessage(typeInto(new Y.Doc(), 'r1/p', '200 bar')))
-    await vi.waitFor(() => expect(store.asked).toBe(1))
+    await eventually(() => expect(store.asked).toBe(1))
     const late = await enter('late')
     late.send(step1Message())
     await aWhile()
@@ -112,7 +113,7 @@ describe('a room', () => {
     expect(cellsOf(late.doc)).toEqual({})
     expect(store.kept).toHaveLength(0)
     store.next()
-    await vi.waitFor(() => {
+    await eventually(() => {
       expect(cellsOf(other.doc)).toEqual({ 'r1/p': '200 bar' })
       expect(cellsOf(late.doc)).toEqual({ 'r1/p': '200 bar' })
     })
@@ -123,23 +124,23 @@ describe('a room', () => {
     const [engineer, other] = [await enter('engineer'), await enter('other')]
     const doc = new Y.Doc()
     engineer.send(updateMessage(typeInto(doc, 'r1/p', '1')))
-    await vi.waitFor(() => expect(store.asked).toBe(1))
+    await eventually(() => expect(store.asked).toBe(1))
     for (const value of ['2', '3', '4']) engineer.send(updateMessage(typeInto(doc, 'r1/p', value)))
     await aWhile()
     store.next()
-    await vi.waitFor(() => expect(store.asked).toBe(1))
+    await eventually(() => expect(store.asked).toBe(1))
     expect(cellsOf(other.doc)).toEqual({ 'r1/p': '1' })
     store.next()
-    await vi.waitFor(() => expect(cellsOf(other.doc)).toEqual({ 'r1/p': '4' }))
+    await eventually(() => expect(cellsOf(other.doc)).toEqual({ 'r1/p': '4' }))
     expect(store.batches).toEqual([1, 3])
   })
 
   it('that cannot store sends everyone away to come back, having shown nothing', async () => {
     const [engineer, other] = [await enter('engineer'), await enter('other')]
     engineer.send(updateMessage(typeInto(new Y.Doc(), 'r1/p', '1')))
-    await vi.waitFor(() => expect(store.asked).toBe(1))
+    await eventually(() => expect(store.asked).toBe(1))
     store.fail()
-    await vi.waitFor(() => expect([engineer.closed, other.closed]).toEqual([CLOSE.storage.code, CLOSE.storage.code]))
+    await eventually(() => expect([engineer.closed, other.closed]).toEqual([CLOSE.storage.code, CLOSE.storage.code]))
     expect(cellsOf(other.doc)).toEqual({})
     expect(room.isOver).toBe(true)
     expect(room.size).toBe(0)
@@ -148,18 +149,18 @@ describe('a room', () => {
   it('of a sheet that is gone meanwhile says so', async () => {
     const engineer = await enter('engineer')
     engineer.send(updateMessage(typeInto(new Y.Doc(), 'r1/p', '1')))
-    await vi.waitFor(() => expect(store.asked).toBe(1))
+    await eventually(() => expect(store.asked).toBe(1))
     store.next(false)
-    await vi.waitFor(() => expect(engineer.closed).toBe(CLOSE.notFound.code))
+    await eventually(() => expect(engineer.closed).toBe(CLOSE.notFound.code))
   })
 
   it('closes only after what came in is stored', async () => {
     const engineer = await enter('engineer')
     engineer.send(updateMessage(typeInto(new Y.Doc(), 'r1/p', '1')))
-    await vi.waitFor(() => expect(store.asked).toBe(1))
+    await eventually(() => expect(store.asked).toBe(1))
     const closed = vi.fn()
     const closing = room.close(CLOSE.shutdown).then(closed)
-    await vi.waitFor(() => expect(engineer.closed).toBe(CLOSE.shutdown.code))
+    await eventually(() => expect(engineer.closed).toBe(CLOSE.shutdown.code))
     await aWhile()
     expect(closed).not.toHaveBeenCalled()
     store.next()
@@ -171,7 +172,7 @@ describe('a room', () => {
   it('takes up the document from the store after a change that may have hurt it, and keeps what came before', async () => {
     const [engineer, other] = [await enter('engineer'), await enter('other')]
     engineer.send(updateMessage(typeInto(new Y.Doc(), 'r1/p', '1')))
-    await vi.waitFor(() => expect(store.asked).toBe(1))
+    await eventually(() => expect(store.asked).toBe(1))
     const foreign = new Y.Doc()
     foreign.getMap('elsewhere').set('x', 1)
     engineer.send(updateMessage(typeInto(new Y.Doc(), 'r2/p', '2')))
@@ -179,16 +180,16 @@ describe('a room', () => {
     engineer.send(updateMessage(Y.encodeStateAsUpdate(foreign)))
     other.send(updateMessage(typeInto(new Y.Doc(), 'r3/p', '3')))
     await aWhile()
-    for (let writes = 0; writes < 3; writes++) {
-      await vi.waitFor(() => expect(store.asked).toBe(1))
+    while (store.kept.length < 3) {
+      await eventually(() => expect(store.asked).toBe(1))
       store.next()
+      await aWhile()
     }
-    await vi.waitFor(() => expect(store.kept).toHaveLength(3))
-    await vi.waitFor(() => expect(engineer.closed).toBe(CLOSE.malformed.code))
+    await eventually(() => expect(engineer.closed).toBe(CLOSE.malformed.code))
     expect(store.loads).toBe(2)
     const late = await enter('late')
     late.send(step1Message())
-    await vi.waitFor(() => expect(cellsOf(late.doc)).toEqual({ 'r1/p': '1', 'r2/p': '2', 'r3/p': '3' }))
+    await eventually(() => expect(cellsOf(late.doc)).toEqual({ 'r1/p': '1', 'r2/p': '2', 'r3/p': '3' }))
     expect(other.closed).toBe(0)
   })
 })
