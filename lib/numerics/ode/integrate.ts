@@ -43,7 +43,7 @@ export interface Outcome {
   readonly cause: Problem | null
 }
 
-const SAFETY = 0.9
+const SAFETY = 0.95
 const SHRINK = 0.2
 const GROW = 8
 /** Memory of the last step's error in the step size (a PI controller): smooths the sequence of steps. */

@@ -7,8 +7,9 @@ const G = 9.80665
 
 /** The gas film on the inner face: its coefficient at the state and the inflow it was last given. */
 export interface Film {
-  /** `gas` is a single-phase state: in two phases that of the vapour. */
-  set(gas: State, inflow_kg_s: number): void
+  /** `gas` is a single-phase state: in two phases that of the vapour. Transport properties are worked out here. */
+  setGas(gas: State): void
+  setInflow(inflow_kg_s: number): void
   /** W/(m² K) at a difference between gas and face of ±difference_K. */
   coefficient(difference_K: number): number
 }
@@ -16,7 +17,7 @@ export interface Film {
 export function film(inside: Inside, fluid: Fluid): Film {
   switch (inside.kind) {
     case 'fixed':
-      return { set: () => undefined, coefficient: () => inside.coefficient_W_m2K }
+      return { setGas: () => undefined, setInflow: () => undefined, coefficient: () => inside.coefficient_W_m2K }
     case 'free':
       return new FreeConvection(fluid, inside.height_m)
     case 'jet':
@@ -45,7 +46,9 @@ class FreeConvection implements Film {
     private readonly height_m: number,
   ) {}
 
-  set(gas: State) {
+  setInflow() {}
+
+  setGas(gas: State) {
     const viscosity = this.fluid.viscosity_Pa_s(gas)
     const conductivity = this.fluid.conductivity_W_mK(gas)
     const prandtl = (viscosity * gas.cp_J_kgK) / conductivity
@@ -67,6 +70,8 @@ class FreeConvection implements Film {
  * with hydrogen, nitrogen and argon while filling small vessels through short inlets. Properties are those of the bulk.
  */
 class JetMixed implements Film {
+  /** At an inflow of 1 kg/s. */
+  private forcedOfOne = 0
   private forced = 0
   private free = 0
 
@@ -76,14 +81,18 @@ class JetMixed implements Film {
     private readonly diameter_m: number,
   ) {}
 
-  set(gas: State, inflow_kg_s: number) {
+  setGas(gas: State) {
     const viscosity = this.fluid.viscosity_Pa_s(gas)
     const conductivity = this.fluid.conductivity_W_mK(gas)
     const conductance = conductivity / this.diameter_m
-    const reynolds = (4 * Math.max(0, inflow_kg_s)) / (Math.PI * this.inlet_m * viscosity)
+    const reynoldsOfOne = 4 / (Math.PI * this.inlet_m * viscosity)
     const rayleigh = Math.abs(unitRayleigh(gas, viscosity, conductivity)) * this.diameter_m ** 3
-    this.forced = conductance * 0.56 * reynolds ** 0.67
+    this.forcedOfOne = conductance * 0.56 * reynoldsOfOne ** 0.67
     this.free = conductance * 0.104 * rayleigh ** 0.352
+  }
+
+  setInflow(inflow_kg_s: number) {
+    this.forced = inflow_kg_s > 0 ? this.forcedOfOne * inflow_kg_s ** 0.67 : 0
   }
 
   coefficient(difference_K: number) {

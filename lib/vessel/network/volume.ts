@@ -40,6 +40,7 @@ export class ControlVolume {
   /** Where an isothermal volume stays. */
   readonly fixed_K: number
   private readonly film: Film | null
+  private filmVersion = -1
   private saturated: State | undefined
   private saturatedVersion = -1
   private saturatedQuality = 1
@@ -156,8 +157,12 @@ export class ControlVolume {
   passHeat(inflow_kg_s: number) {
     if (!this.film) return
     const { vessel, wall, gas, cells_K } = this
-    // In two phases it is the vapour that touches most of the wall, as a phase by itself.
-    this.film.set(gas.x >= 0 ? this.fluid.saturationAtT(gas.T_K).vapour : gas, inflow_kg_s)
+    if (this.filmVersion !== this.version) {
+      // In two phases it is the vapour that touches most of the wall, as a phase by itself.
+      this.film.setGas(gas.x >= 0 ? this.fluid.saturationAtT(gas.T_K).vapour : gas)
+      this.filmVersion = this.version
+    }
+    this.film.setInflow(inflow_kg_s)
     heatIn(this.film, wall.innerArea_m2, gas.T_K, cells_K[0], wall.innerResistance_K_W, this.inner)
     heatOut(
       vessel.outside,

@@ -19,7 +19,7 @@ describe('free convection', () => {
     const rayleigh = (((9.80665 / 300) * difference * height ** 3 * gas.rho_kg_m3 ** 2) / 1.846e-5 ** 2) * prandtl
     const nusselt = (0.825 + (0.387 * rayleigh ** (1 / 6)) / (1 + (0.492 / prandtl) ** (9 / 16)) ** (8 / 27)) ** 2
     const layer = film({ kind: 'free', height_m: height }, air)
-    layer.set(gas, 0)
+    layer.setGas(gas)
     expect(layer.coefficient(difference) / ((nusselt * 0.0263) / height)).toBeCloseTo(1, 9)
     expect(layer.coefficient(-difference)).toBe(layer.coefficient(difference))
     // McAdams’ simpler law for turbulent air on a wall, Nu = 0.1 Ra^(1/3), is near it.
@@ -30,10 +30,11 @@ describe('free convection', () => {
 
 describe('a jet', () => {
   const layer = film({ kind: 'jet', inletDiameter_m: 4e-3, diameter_m: 0.24 }, air)
+  layer.setGas(gas)
 
   it('stirs with the Reynolds number of its inlet to the power 0.67', () => {
     const forced = (flow: number) => {
-      layer.set(gas, flow)
+      layer.setInflow(flow)
       return layer.coefficient(0)
     }
     expect(forced(0.02) / forced(0.01)).toBeCloseTo(2 ** 0.67, 9)
@@ -42,9 +43,9 @@ describe('a jet', () => {
   })
 
   it('does not while gas flows out', () => {
-    layer.set(gas, -0.05)
+    layer.setInflow(-0.05)
     const outward = layer.coefficient(10)
-    layer.set(gas, 0)
+    layer.setInflow(0)
     expect(outward).toBe(layer.coefficient(10))
     expect(outward).toBeGreaterThan(0)
   })
@@ -68,7 +69,8 @@ describe('heat through the faces', () => {
                 : { kind, coefficient_W_m2K: 40 },
             air,
           )
-          layer.set(gas, 0.003)
+          layer.setGas(gas)
+          layer.setInflow(0.003)
           heatIn(layer, 0.7, 300, cell_K, resistance, out)
           const conducted = (cell_K - out.face_K) / resistance
           const scale = Math.abs(out.heat_W) + 1e-6
