@@ -37,7 +37,7 @@ export function airBoundary(fluid: HelmholtzFluid, T_low_K: number, at: State): 
       const guess = i === start ? first : table.ahead(side, i, -1, start)
       const search = new DensityAtPressure(fluid)
       search.at(T_K, pressure_Pa(curve, T_K), at)
-      const rho = monotoneRoot(search, guess * 0.7, guess * 1.4, guess, 1e-12)
+      const rho = monotoneRoot(search, 'rising', guess * 0.7, guess * 1.4, guess, 1e-12)
       if (Number.isNaN(rho)) throw new Error(`air has no density on its boundary at ${T_K} K`)
       shift(at, 0, -search.value / search.slope)
       table.set(side, i, { rho: at.rho_kg_m3, p_Pa: search.p_Pa, u: at.u_J_kg, s: at.s_J_kgK })

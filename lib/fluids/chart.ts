@@ -12,6 +12,8 @@ export type Branch = 'gas' | 'liquid' | 'beyond'
 export interface Start {
   T_K: number
   rho: number
+  /** Colder than this the equation does not reach: the fluid is solid there. */
+  T_low_K: number
 }
 
 /** One isotherm of one phase from its thinnest to its densest, as far as the equation behaves and p_max allows. */
@@ -102,7 +104,11 @@ export class Chart {
         )
     const below = branch === 'gas' ? this.gas : this.liquid
     const has = (column: Column) => !edge || (branch === 'liquid' ? column.T_K < T_edge_K : column.T_K > T_edge_K)
-    const columns = [...below.filter(has), ...(branch === 'liquid' && edge ? [] : this.beyond)]
+    const all = [...below.filter(has), ...(branch === 'liquid' && edge ? [] : this.beyond)]
+    const first = branch === 'gas' ? 0 : all.findIndex((column) => column.p_Pa.at(-1)! >= p_Pa)
+    // between two columns the equation reaches somewhat further than the colder of them
+    out.T_low_K = first > 1 ? all[first - 2].T_K : this.fluid.info.T_min_K
+    const columns = first > 0 ? all.slice(first) : all
     const points = columns.map((column) => this.atColumn(column, rhoAtPressure(column, p_Pa, this.R), p_Pa))
     if (edge && branch === 'liquid') points.push(edge)
     else if (edge) points.unshift(edge)
@@ -110,24 +116,31 @@ export class Chart {
   }
 
   /** Temperature at a density and an energy or pressure, from where the density leaves the two-phase region upward. */
-  atDensity(rho: number, by: Energy | 'p', value: number, T_edge_K: number): number {
+  atDensity(rho: number, by: Energy | 'p', value: number, T_edge_K: number, out: Start): void {
     const { table } = this
     const side = rho < table.rho_top ? VAPOUR : LIQUID
     const points: Point[] = []
+    out.T_low_K = out.T_K = this.fluid.info.T_min_K
+    out.rho = rho
+    let excluded = out.T_low_K
     if (!Number.isNaN(T_edge_K)) {
       const T = Math.min(T_edge_K, table.T_top_K)
       points.push(this.point(T, rho, table.p_Pa(side, T), table.u_J_kg(side, T), table.s_J_kgK(side, T)))
     }
     const below = side === VAPOUR ? this.gas : this.liquid
     for (const column of [...below, ...this.beyond]) {
-      if (column.T_K < T_edge_K || rho > column.rho.at(-1)!) continue
+      if (column.T_K < T_edge_K) continue
+      if (rho > column.rho.at(-1)!) {
+        if (points.length > 0) continue
+        out.T_low_K = excluded
+        excluded = column.T_K
+        continue
+      }
       if (rho < column.rho[0] && column.rho[0] > 0.1 * table.rho_top) continue
       const Z = valueAt(column, rho, column.p_Pa) / (rho * this.R * column.T_K)
       points.push(this.atColumn(column, rho, Z * rho * this.R * column.T_K))
     }
-    const out = { T_K: this.fluid.info.T_min_K, rho }
     between(points, by, value, out)
-    return out.T_K
   }
 
   /** Density at a temperature and entropy on one branch. */

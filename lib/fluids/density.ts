@@ -52,7 +52,7 @@ export function solveDensity(
   const inside = Math.min(Math.max(first, low * (1 + 2 * SLACK)), high * (1 - 2 * SLACK))
   const search = fluid.densitySearch
   search.at(T_K, p_Pa, out)
-  const rho = monotoneRoot(search, low, high, inside, 1e-11)
+  const rho = monotoneRoot(search, 'rising', low, high, inside, 1e-11)
   if (Number.isNaN(rho)) {
     throw branch === 'gas'
       ? new Problem('unconverged', `no density of ${fluid.name} was found at ${bar(p_Pa)} and ${kelvin(T_K)}`)

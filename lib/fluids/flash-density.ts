@@ -1,12 +1,15 @@
 import { Problem } from '@/lib/errors'
 import type { Objective } from '@/lib/numerics/roots'
 import { monotoneRoot } from '@/lib/numerics/roots'
+import type { Start } from './chart'
 import type { State } from './fluid'
 import type { HelmholtzFluid } from './helmholtz-fluid'
 import { fillTwoPhase, shift } from './properties'
 import { LIQUID, VAPOUR } from './saturation-table'
 import type { Side } from './saturation-table'
 import { kelvin, perCubicMetre } from './words'
+
+const start: Start = { T_K: 0, rho: 0, T_low_K: 0 }
 
 type By = 'u' | 'h' | 'p'
 
@@ -36,7 +39,7 @@ export function flashAtDensity(
   const { boundary, info } = fluid
   const { table } = boundary
   const side: Side = rho < table.rho_top ? VAPOUR : LIQUID
-  const T_edge = table.T_atDensity(side, rho, boundary.T_low_K)
+  const T_edge = table.T_atDensity(side, rho)
   let low = info.T_min_K
   if (!Number.isNaN(T_edge)) {
     low = T_edge
@@ -44,9 +47,15 @@ export function flashAtDensity(
     if (value < edge - 1e-10 * Math.abs(edge)) return belowEdge(fluid, rho, by, value, T_edge, out)
   }
   const near = guess && guess.phase !== 'two-phase' ? temperatureNear(guess, rho, by, value) : NaN
-  const first = near >= low && near <= info.T_max_K ? near : fluid.chart.atDensity(rho, by, value, T_edge)
+  let first = near
+  if (!(near >= low && near <= info.T_max_K)) {
+    fluid.chart.atDensity(rho, by, value, T_edge, start)
+    first = start.T_K
+    low = Math.max(low, start.T_low_K)
+  }
   const search = new TemperatureAtDensity(fluid, rho, by, value, out)
-  const T = monotoneRoot(search, low * (1 - 1e-8), info.T_max_K * (1 + 1e-8), first, 1e-10)
+  if (by === 'p' && side === LIQUID && Number.isNaN(T_edge)) low = warmBranch(search, low, first)
+  const T = monotoneRoot(search, 'rising', low * (1 - 1e-8), info.T_max_K * (1 + 1e-8), first, 1e-10)
   if (Number.isNaN(T)) throw outside(fluid, rho, by, value, out)
   shift(out, -search.value / search.slope, 0)
   fluid.checkTemperature(out.T_K)
@@ -83,6 +92,21 @@ class TemperatureAtDensity implements Objective {
   }
 }
 
+/** From where up the pressure rises with temperature: the lower end, unless the liquid contracts on warming there. */
+function warmBranch(search: TemperatureAtDensity, T_low: number, T_first: number): number {
+  if (T_first > 1.1 * T_low) return T_low
+  search.evaluate(T_low)
+  if (search.slope >= 0) return T_low
+  let [low, high] = [T_low, 1.1 * T_low]
+  while (high - low > 1e-9 * high) {
+    const middle = (low + high) / 2
+    search.evaluate(middle)
+    if (search.slope < 0) low = middle
+    else high = middle
+  }
+  return high
+}
+
 function edgeValue(fluid: HelmholtzFluid, side: Side, T_K: number, rho: number, by: By): number {
   const { table } = fluid.boundary
   const p = table.p_Pa(side, T_K)
@@ -105,7 +129,14 @@ function belowEdge(fluid: HelmholtzFluid, rho: number, by: By, value: number, T_
   const { table, T_low_K } = boundary
   boundary.checkEquilibrium()
   const onTable = new TableAtDensity(fluid, rho, by, value)
-  const T_guess = monotoneRoot(onTable, T_low_K * (1 - 1e-9), T_edge, T_low_K + 0.7 * (T_edge - T_low_K), 1e-13)
+  const T_guess = monotoneRoot(
+    onTable,
+    'rising',
+    T_low_K * (1 - 1e-9),
+    T_edge,
+    T_low_K + 0.7 * (T_edge - T_low_K),
+    1e-13,
+  )
   if (Number.isNaN(T_guess)) {
     throw new Problem(
       'range',
@@ -115,7 +146,7 @@ function belowEdge(fluid: HelmholtzFluid, rho: number, by: By, value: number, T_
   let T = Math.min(T_guess - onTable.value / onTable.slope, T_edge)
   if (rho >= table.rho(LIQUID, T)) {
     const search = new TemperatureAtDensity(fluid, rho, by, value, out)
-    const found = monotoneRoot(search, T_low_K * (1 - 1e-9), T_edge, T, 1e-10)
+    const found = monotoneRoot(search, 'rising', T_low_K * (1 - 1e-9), T_edge, T, 1e-10)
     if (Number.isNaN(found)) throw outside(fluid, rho, by, value, out)
     shift(out, -search.value / search.slope, 0)
     return out

@@ -25,7 +25,7 @@ function slopeRho(state: State, by: Energy): number {
   return by === 'u' ? (p - T * dpdT) / (rho * rho) : dpdrho / rho - (T * dpdT) / (rho * rho)
 }
 
-const start: Start = { T_K: 0, rho: 0 }
+const start: Start = { T_K: 0, rho: 0, T_low_K: 0 }
 
 /** The state at a pressure and an enthalpy, an entropy or an internal energy, all of which rise with temperature there. */
 export function flashAtPressure(
@@ -60,6 +60,7 @@ export function flashAtPressure(
   }
   if (!fromNeighbour(guess, p_Pa, by, value, low, high, start))
     fluid.chart.atPressure(p_Pa, by, value, branch, T_edge, start)
+  low = Math.max(low, start.T_low_K)
   const settled = newton(fluid, p_Pa, by, value, branch, low, high, out)
   if (!settled) nested(fluid, p_Pa, by, value, branch, low, high, out)
   fluid.checkTemperature(out.T_K)
@@ -96,6 +97,7 @@ function fromNeighbour(
   if (!(Math.abs(stepT) < 0.1 * guess.T_K && Math.abs(stepDensity) < 0.1 * guess.rho_kg_m3)) return false
   to.T_K = guess.T_K + stepT
   to.rho = guess.rho_kg_m3 + stepDensity
+  to.T_low_K = low
   return to.T_K >= low * (1 - 1e-6) && to.T_K <= high * (1 + 1e-6)
 }
 
@@ -182,7 +184,7 @@ function nested(
   const { T_min_K, T_max_K } = fluid.info
   const search = new TemperatureAtPressure(fluid, p_Pa, by, value, branch, out)
   const guess = Math.min(Math.max(start.T_K, low), high)
-  const T = monotoneRoot(search, low * (1 - 1e-9), high * (1 + 1e-9), guess, 1e-11)
+  const T = monotoneRoot(search, 'rising', low * (1 - 1e-9), high * (1 + 1e-9), guess, 1e-11)
   if (!Number.isNaN(T)) return
   search.evaluate(high)
   const bound = search.value < 0 ? `above ${kelvin(T_max_K)}` : `below ${kelvin(T_min_K)}`

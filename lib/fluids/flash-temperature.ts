@@ -61,7 +61,7 @@ export function flashTs(fluid: HelmholtzFluid, T_K: number, s: number, out: Stat
       ? guess.rho_kg_m3
       : chart.atEntropy(T_K, s, branch)
   const search = new LogDensityAtEntropy(fluid, T_K, s, out)
-  const logRho = monotoneRoot(search, Math.log(low), Math.log(high), Math.log(first), 1e-12)
+  const logRho = monotoneRoot(search, 'falling', Math.log(low), Math.log(high), Math.log(first), 1e-12)
   if (Number.isNaN(logRho)) throw new Problem('state', `no ${fluid.name} at ${kelvin(T_K)} has this entropy`)
   shift(out, 0, (-search.value / search.slope) * out.rho_kg_m3)
   fluid.checkPressure(out.p_Pa)

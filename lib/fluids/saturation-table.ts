@@ -31,7 +31,7 @@ export class SaturationTable {
   constructor(
     readonly T_top_K: number,
     readonly rho_top: number,
-    T_low_K: number,
+    readonly T_low_K: number,
     readonly exponent: number,
   ) {
     // beyond the lower end, so that its neighbourhood is interpolated too
@@ -88,18 +88,28 @@ export class SaturationTable {
     return this.search((place) => interpolate(table, place) - lnP, 1)
   }
 
-  /** The warmest temperature at which the side has a density; NaN where it has it nowhere above T_low. */
-  T_atDensity(side: Side, rho: number, T_low_K: number): number {
+  /** The warmest temperature at which the side has a density; NaN where it has it nowhere. */
+  T_atDensity(side: Side, rho: number): number {
     const table = this.lnRho[side]
     const lnRho = Math.log(rho / this.rho_top)
     const off = (place: number) => (place + 1) * STEP * interpolate(table, place) - lnRho
     const sign = side === VAPOUR ? 1 : -1
-    const end = this.sigma(T_low_K) / STEP - 1
-    if (sign * off(-1) < 0) return NaN
-    if (sign * off(end) <= 0) return this.search(off, sign)
-    // of water the saturated liquid is densest above the triple point
-    for (let i = Math.floor(end); i > end - 20; i--) if (sign * off(i) < 0) return this.search(off, sign, i)
-    return NaN
+    const end = side === VAPOUR ? this.sigma(this.T_low_K) / STEP - 1 : this.densestPlace()
+    if (sign * off(-1) < 0 || sign * off(end) > 0) return NaN
+    return this.search(off, sign, end)
+  }
+
+  /** Of water, the saturated liquid is densest some degrees above the triple point; of most fluids, there. */
+  private densestPlace(): number {
+    const lnRho = (place: number) => (place + 1) * STEP * interpolate(this.lnRho[LIQUID], place)
+    let high = this.sigma(this.T_low_K) / STEP - 1
+    let low = high - 4
+    while (high - low > 1e-9) {
+      const third = (high - low) / 3
+      if (lnRho(low + third) < lnRho(high - third)) low += third
+      else high -= third
+    }
+    return (low + high) / 2
   }
 
   private sigma(T_K: number): number {

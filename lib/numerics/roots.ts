@@ -8,14 +8,22 @@ export interface Objective {
 const MOST = 120
 
 /**
- * The zero of a function that rises or falls all the way between two bounds. Each step goes through the last two points and
+ * The zero of a function that rises (or falls) from below zero to above it (or back) between two bounds, once. Each step goes through the last two points and
  * their slopes (a cubic in the inverse function; the first by Newton's method), kept between the bounds by halving, so that
  * it always ends.
  * @param tolerance a step this small, relative to x, ends the search
  * @returns the last x at which the objective was evaluated; `value / slope` there is the step that was not worth taking.
  *   NaN where the bounds enclose no zero.
  */
-export function monotoneRoot(f: Objective, low: number, high: number, guess: number, tolerance: number): number {
+export function monotoneRoot(
+  f: Objective,
+  direction: 'rising' | 'falling',
+  low: number,
+  high: number,
+  guess: number,
+  tolerance: number,
+): number {
+  const rising = direction === 'rising'
   let [a, b] = [low, high]
   let x = guess > a && guess < b ? guess : (a + b) / 2
   let [x0, f0, g0] = [NaN, NaN, NaN]
@@ -24,12 +32,14 @@ export function monotoneRoot(f: Objective, low: number, high: number, guess: num
     f.evaluate(x)
     const { value, slope } = f
     if (value === 0) return x
-    if (value > 0 === slope > 0) b = x
+    if (value > 0 === rising) b = x
     else a = x
-    let step = -value / slope
+    // over a stretch that runs the other way only the bounds help
+    const helps = slope > 0 === rising
+    let step = helps ? -value / slope : Infinity
     if (Math.abs(step) <= tolerance * Math.abs(x)) return x
     const t = -value / (f0 - value)
-    if (Math.abs(t) < 0.5 && g0 * slope > 0) {
+    if (helps && Math.abs(t) < 0.5 && g0 * slope > 0) {
       const h = f0 - value
       step = t * t * (3 - 2 * t) * (x0 - x) + h * (t * (1 - t) * (1 - t) * (1 / slope) + t * t * (t - 1) * (1 / g0))
     }
