@@ -24,6 +24,8 @@ interface Column {
   readonly u: readonly number[]
   /** s + R ln ρ, which stays finite and nearly straight where the gas is thin. */
   readonly sigma: readonly number[]
+  /** It ends at p_max, not where the equation ceases to behave. */
+  readonly whole: boolean
 }
 
 const COLUMNS = 24
@@ -78,12 +80,13 @@ export class Chart {
       : p_Pa / (RT * (Za + t * (Zb - Za)))
   }
 
-  /** The densest state at a temperature to which the equation behaves. */
+  /** The densest state at a temperature: that of p_max, or to which the equation behaves. */
   densest(T_K: number, branch: Branch): number {
     const columns = this.columns(branch)
     const i = placeOf(columns, T_K)
-    const [a, b] = [columns[i].rho.at(-1)!, columns[i + 1].rho.at(-1)!]
-    return Math.max(a, b)
+    const [a, b] = [columns[i], columns[i + 1]]
+    const whole = a.whole && b.whole
+    return whole ? 1.03 * Math.max(a.rho.at(-1)!, b.rho.at(-1)!) : Math.min(a.rho.at(-1)!, b.rho.at(-1)!)
   }
 
   /**
@@ -189,6 +192,7 @@ export class Chart {
       const state = this.add(column, rho)
       if (column.rho.length > 2 && !isFluid(state, this.table)) {
         for (const list of [column.rho, column.p_Pa, column.u, column.sigma]) list.pop()
+        column.whole = false
         break
       }
       if (state.p_Pa > 1.05 * p_max_Pa) break
@@ -235,9 +239,10 @@ interface MutableColumn {
   readonly p_Pa: number[]
   readonly u: number[]
   readonly sigma: number[]
+  whole: boolean
 }
 
-const emptyColumn = (T_K: number): MutableColumn => ({ T_K, rho: [], p_Pa: [], u: [], sigma: [] })
+const emptyColumn = (T_K: number): MutableColumn => ({ T_K, rho: [], p_Pa: [], u: [], sigma: [], whole: true })
 
 /** The last place from which a list of columns runs past a temperature; never the last of all. */
 function placeOf(columns: readonly Column[], T_K: number): number {

@@ -47,7 +47,7 @@ export function solveDensity(
   const { table } = fluid.boundary
   const densest = chart.densest(T_K, branch)
   const low = branch === 'liquid' ? table.rho(LIQUID, T_K) * (1 - SLACK) : 0
-  const high = branch === 'gas' ? table.rho(VAPOUR, T_K) * (1 + SLACK) : densest * 1.03
+  const high = branch === 'gas' ? table.rho(VAPOUR, T_K) * (1 + SLACK) : densest
   const first = guess > low && guess < high ? guess : chart.densityAt(T_K, p_Pa, branch)
   const inside = Math.min(Math.max(first, low * (1 + 2 * SLACK)), high * (1 - 2 * SLACK))
   const search = fluid.densitySearch

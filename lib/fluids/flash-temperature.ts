@@ -55,7 +55,7 @@ export function flashTs(fluid: HelmholtzFluid, T_K: number, s: number, out: Stat
     if (branch === 'gas') high = table.rho(VAPOUR, T_K) * (1 + 1e-7)
     else low = table.rho(LIQUID, T_K) * (1 - 1e-7)
   }
-  if (branch !== 'gas') high = chart.densest(T_K, branch) * 1.03
+  if (branch !== 'gas') high = chart.densest(T_K, branch)
   const first =
     guess && guess.phase !== 'two-phase' && Math.abs(guess.T_K / T_K - 1) < 0.02
       ? guess.rho_kg_m3
