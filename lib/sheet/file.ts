@@ -11,7 +11,7 @@ import { sectionOf } from './engine/vocabulary'
 import { scopeOf } from './scope'
 
 /*
- * A sheet as a file that people can read, keep and send: formulas in people's names, states by their number.
+ * A sheet as a file that people can read, keep and send: formulas in people's names, states in a formula by their label or number.
  * Version 1. A field that is left out takes its default.
  */
 

@@ -198,3 +198,25 @@ describe('the demo', () => {
     expect(at('Fill quick', 'p')).toBeCloseTo(200e5, 0)
   })
 })
+
+describe('a mistake of ours in one function', () => {
+  it('should leave the rest of the sheet working, and be heard of', () => {
+    const broken = new Map(VOCABULARY.functions)
+    broken.set('density', {
+      ...VOCABULARY.functions.get('density')!,
+      evaluate: () => {
+        throw new TypeError('undefined is no fluid')
+      },
+    })
+    const heard: unknown[] = []
+    const { doc, columns, rows } = cheapSheet()
+    const engine = new SheetEngine({ ...VOCABULARY, functions: broken }, LICENSE, (mistake) => heard.push(mistake))
+    const { cells } = engine.update(readSheet(doc))
+    expect(cells.get(cellKey(rows[1], columns[2]))).toMatchObject({
+      kind: 'error',
+      reason: expect.stringContaining('our mistake') as string,
+    })
+    expect(cells.get(cellKey(rows[1], columns[1]))).toEqual({ kind: 'number', si: 5e5 })
+    expect(heard[0]).toBeInstanceOf(TypeError)
+  })
+})

@@ -1,7 +1,7 @@
 import { DetailedCellError } from 'hyperformula'
 import type { ExportedChange, HyperFormula } from 'hyperformula'
 import { isFault, isThing } from '@/lib/formula'
-import type { Read, Surroundings, Type, Value, Vocabulary } from '@/lib/formula'
+import type { Fault, Read, Surroundings, Type, Value, Vocabulary } from '@/lib/formula'
 import { cellKey } from '../doc/definition'
 import type { ColumnDefinition, RowDefinition, SheetDefinition } from '../doc/definition'
 import { scopeOf } from '../scope'
@@ -23,6 +23,15 @@ interface Gone {
   readonly columns: ReadonlySet<number>
   readonly things: ReadonlySet<number>
   readonly any: boolean
+}
+
+const OUR_MISTAKE: Fault = {
+  fault: 'unconverged',
+  reason: 'this could not be worked out, and it is our mistake: please report it with the sheet',
+}
+
+function rethrow(mistake: unknown): never {
+  throw mistake
 }
 
 const EMPTY_SHEET: SheetDefinition = { rig: [], columns: [], rows: [], cells: new Map() }
@@ -48,6 +57,8 @@ export class SheetEngine {
   constructor(
     private readonly vocabulary: Vocabulary,
     licenseKey: string,
+    /** Hears of a programmer’s mistake in a cell, which must not take the rest of the sheet with it. By default it is thrown. */
+    private readonly onMistake: (mistake: unknown) => void = rethrow,
   ) {
     this.formulas = new Formulas(vocabulary)
     this.surroundings = surroundingsOf([], vocabulary)
@@ -86,7 +97,12 @@ export class SheetEngine {
     const compilation = this.formulas.numbered(k)
     if (!compilation.ok) return this.interned.toGraph(compilation.fault)
     const values = reads.map((read) => this.interned.fromGraph(read))
-    return this.interned.toGraph(compilation.run(values, this.surroundings))
+    try {
+      return this.interned.toGraph(compilation.run(values, this.surroundings))
+    } catch (mistake) {
+      this.onMistake(mistake)
+      return this.interned.toGraph(OUR_MISTAKE)
+    }
   }
 
   private takeSurroundings(): void {

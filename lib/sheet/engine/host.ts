@@ -34,7 +34,7 @@ export class EngineHost {
   take(message: ToEngine): void {
     switch (message.type) {
       case 'open':
-        this.engine = new SheetEngine(VOCABULARY, message.licenseKey)
+        this.engine = new SheetEngine(VOCABULARY, message.licenseKey, reportLater)
         return
       case 'update':
         Y.applyUpdate(this.doc, message.bytes)
@@ -61,4 +61,11 @@ export class EngineHost {
       this.reply({ type: 'changes', serial, changes: this.engine.update(readSheet(this.doc)) })
     })
   }
+}
+
+/** Into the console of the page or the thread, past the sheet that goes on working. */
+function reportLater(mistake: unknown): void {
+  setTimeout(() => {
+    throw mistake
+  })
 }
