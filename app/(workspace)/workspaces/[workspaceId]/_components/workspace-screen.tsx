@@ -39,6 +39,9 @@ export function WorkspaceScreen({ workspace, me, actions }: WorkspaceScreenProps
         title={workspace.name}
         actions={
           <>
+            <Link href="/fluids" className="font-semibold hover:underline">
+              Fluids
+            </Link>
             <span className="hidden text-white/80 sm:inline">
               {me.name}, {workspace.role}
             </span>
