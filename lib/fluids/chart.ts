@@ -134,7 +134,7 @@ export class Chart {
     for (const column of [...below, ...this.beyond]) {
       if (column.T_K < T_edge_K) continue
       if (rho > column.rho.at(-1)!) {
-        if (points.length > 0) continue
+        if (points.length > 0 || column.whole) continue
         out.T_low_K = excluded
         excluded = column.T_K
         continue

@@ -43,8 +43,8 @@ export function flashAtDensity(
   let low = info.T_min_K
   if (!Number.isNaN(T_edge)) {
     low = T_edge
-    const edge = edgeValue(fluid, side, T_edge, rho, by)
-    if (value < edge - 1e-10 * Math.abs(edge)) return belowEdge(fluid, rho, by, value, T_edge, out)
+    const hair = 1e-10 * fluid.scales.R_J_kgK * T_edge * (by === 'p' ? rho : 1)
+    if (value < edgeValue(fluid, side, T_edge, rho, by) - hair) return belowEdge(fluid, rho, by, value, T_edge, out)
   }
   const near = guess && guess.phase !== 'two-phase' ? temperatureNear(guess, rho, by, value) : NaN
   let first = near
@@ -55,7 +55,9 @@ export function flashAtDensity(
   }
   const search = new TemperatureAtDensity(fluid, rho, by, value, out)
   if (by === 'p' && side === LIQUID && Number.isNaN(T_edge)) low = warmBranch(search, low, first)
-  const T = monotoneRoot(search, 'rising', low * (1 - 1e-8), info.T_max_K * (1 + 1e-8), first, 1e-10)
+  // next to the critical point the table's edge is less sharp
+  const slack = Math.abs(low / table.T_top_K - 1) < 2e-3 ? 1e-5 : 1e-8
+  const T = monotoneRoot(search, 'rising', low * (1 - slack), info.T_max_K * (1 + 1e-8), first, 1e-10)
   if (Number.isNaN(T)) throw outside(fluid, rho, by, value, out)
   shift(out, -search.value / search.slope, 0)
   fluid.checkTemperature(out.T_K)
@@ -129,6 +131,8 @@ function belowEdge(fluid: HelmholtzFluid, rho: number, by: By, value: number, T_
   const { table, T_low_K } = boundary
   boundary.checkEquilibrium()
   const onTable = new TableAtDensity(fluid, rho, by, value)
+  onTable.evaluate(T_low_K)
+  const lowest = onTable.value - 1e-9 * fluid.scales.R_J_kgK * T_low_K * (by === 'p' ? rho : 1)
   const T_guess = monotoneRoot(
     onTable,
     'rising',
@@ -137,19 +141,24 @@ function belowEdge(fluid: HelmholtzFluid, rho: number, by: By, value: number, T_
     T_low_K + 0.7 * (T_edge - T_low_K),
     1e-13,
   )
-  if (Number.isNaN(T_guess)) {
+  if (Number.isNaN(T_guess) && lowest > 0) {
     throw new Problem(
       'range',
       `at ${perCubicMetre(rho)} this would be ${fluid.name} below its triple point, ${kelvin(T_low_K)}, which is not worked out here`,
     )
   }
-  let T = Math.min(T_guess - onTable.value / onTable.slope, T_edge)
+  let T = Number.isNaN(T_guess)
+    ? onTable.value < 0
+      ? T_edge
+      : T_low_K
+    : Math.min(T_guess - onTable.value / onTable.slope, T_edge)
   if (rho >= table.rho(LIQUID, T)) {
     const search = new TemperatureAtDensity(fluid, rho, by, value, out)
     const found = monotoneRoot(search, 'rising', T_low_K * (1 - 1e-9), T_edge, T, 1e-10)
-    if (Number.isNaN(found)) throw outside(fluid, rho, by, value, out)
-    shift(out, -search.value / search.slope, 0)
-    return out
+    if (!Number.isNaN(found)) {
+      shift(out, -search.value / search.slope, 0)
+      return out
+    }
   }
   for (let i = 0; i < 10; i++) {
     const { liquid, vapour } = boundary.solveAt(T)

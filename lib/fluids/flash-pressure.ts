@@ -45,12 +45,14 @@ export function flashAtPressure(
   if (p_Pa < boundary.p_top_Pa) {
     branch = 'gas'
     // below its triple-point pressure a fluid here is a gas at every temperature
-    if (p_Pa >= table.p_Pa(LIQUID, boundary.T_low_K)) {
+    if (p_Pa >= table.p_Pa(LIQUID, boundary.T_low_K) * (1 - 1e-9)) {
       const T_bubble = table.T_atPressure(LIQUID, p_Pa)
       const T_dew = boundary.hasEquilibrium ? T_bubble : table.T_atPressure(VAPOUR, p_Pa)
       const atBubble = edgeValue(fluid, LIQUID, T_bubble, p_Pa, by)
       const atDew = edgeValue(fluid, VAPOUR, T_dew, p_Pa, by)
       const hair = 1e-10 * Math.abs(atDew - atBubble)
+      if (value > atBubble - hair && value < atDew + hair && boundary.hasEquilibrium)
+        return twoPhase(fluid, p_Pa, by, value, out)
       if (value > atBubble + hair && value < atDew - hair) return twoPhase(fluid, p_Pa, by, value, out)
       branch = value <= atBubble + hair ? 'liquid' : 'gas'
       T_edge = branch === 'liquid' ? T_bubble : T_dew
@@ -79,7 +81,9 @@ function twoPhase(fluid: HelmholtzFluid, p_Pa: number, by: Energy, value: number
   fluid.boundary.checkEquilibrium()
   const { liquid, vapour } = fluid.boundary.solveAtPressure(p_Pa)
   const [yl, yv] = [valueOf(liquid, by), valueOf(vapour, by)]
-  return fillTwoPhase(out, liquid, vapour, Math.min(1, Math.max(0, (value - yl) / (yv - yl))))
+  const x = (value - yl) / (yv - yl)
+  // less than the digits of the value can tell is no vapour at all; at a millipascal it would fill most of the volume
+  return fillTwoPhase(out, liquid, vapour, x < 1e-15 ? 0 : Math.min(1, x))
 }
 
 /** One step of Newton's method from the neighbour's own derivatives, which costs no evaluation. */

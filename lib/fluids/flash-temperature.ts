@@ -45,15 +45,19 @@ export function flashTs(fluid: HelmholtzFluid, T_K: number, s: number, out: Stat
   if (T_K < table.T_top_K) {
     const [s_liquid, s_vapour] = [table.s_J_kgK(LIQUID, T_K), table.s_J_kgK(VAPOUR, T_K)]
     const hair = 1e-10 * (s_vapour - s_liquid)
-    if (s > s_liquid + hair && s < s_vapour - hair) {
+    if (
+      s > s_liquid - hair &&
+      s < s_vapour + hair &&
+      (fluid.boundary.hasEquilibrium || (s > s_liquid + hair && s < s_vapour - hair))
+    ) {
       fluid.boundary.checkEquilibrium()
       const { liquid, vapour } = fluid.boundary.solveAt(T_K)
       const x = (s - liquid.s_J_kgK) / (vapour.s_J_kgK - liquid.s_J_kgK)
       return fillTwoPhase(out, liquid, vapour, Math.min(1, Math.max(0, x)))
     }
     branch = s >= s_vapour - hair ? 'gas' : 'liquid'
-    if (branch === 'gas') high = table.rho(VAPOUR, T_K) * (1 + 1e-7)
-    else low = table.rho(LIQUID, T_K) * (1 - 1e-7)
+    if (branch === 'gas') high = table.rho(VAPOUR, T_K) * 1.001
+    else low = table.rho(LIQUID, T_K) * 0.999
   }
   if (branch !== 'gas') high = chart.densest(T_K, branch)
   const first =

@@ -14,7 +14,7 @@ export interface Entry {
 const ORDER = 8
 /** Of Lagrange's polynomial through eight points at equal steps. */
 const WEIGHTS = [-1, 7, -21, 35, -35, 21, -7, 1]
-export const STEP = 0.004
+export const STEP = 0.0025
 
 /**
  * The edges of the two-phase region as a table of an equation of state's own solutions, at equal steps of
