@@ -44,7 +44,11 @@ export function flashAtDensity(
   if (!Number.isNaN(T_edge)) {
     low = T_edge
     const hair = 1e-10 * fluid.scales.R_J_kgK * T_edge * (by === 'p' ? rho : 1)
-    if (value < edgeValue(fluid, side, T_edge, rho, by) - hair) return belowEdge(fluid, rho, by, value, T_edge, out)
+    // next to the critical point the table is less sharp than the equation
+    const edge = isNearTop(fluid, T_edge)
+      ? valueOf(fluid.singlePhase(T_edge, rho, out), by)
+      : edgeValue(fluid, side, T_edge, rho, by)
+    if (value < edge - hair) return belowEdge(fluid, rho, by, value, T_edge, out)
   }
   const near = guess && guess.phase !== 'two-phase' ? temperatureNear(guess, rho, by, value) : NaN
   let first = near
@@ -55,8 +59,7 @@ export function flashAtDensity(
   }
   const search = new TemperatureAtDensity(fluid, rho, by, value, out)
   if (by === 'p' && side === LIQUID && Number.isNaN(T_edge)) low = warmBranch(search, low, first)
-  // next to the critical point the table's edge is less sharp
-  const slack = Math.abs(low / table.T_top_K - 1) < 2e-3 ? 1e-5 : 1e-8
+  const slack = isNearTop(fluid, low) ? 1e-5 : 1e-8
   const T = monotoneRoot(search, 'rising', low * (1 - slack), info.T_max_K * (1 + 1e-8), first, 1e-10)
   if (Number.isNaN(T)) throw outside(fluid, rho, by, value, out)
   shift(out, -search.value / search.slope, 0)
@@ -108,6 +111,8 @@ function warmBranch(search: TemperatureAtDensity, T_low: number, T_first: number
   }
   return high
 }
+
+const isNearTop = (fluid: HelmholtzFluid, T_K: number) => Math.abs(T_K / fluid.boundary.table.T_top_K - 1) < 1e-3
 
 function edgeValue(fluid: HelmholtzFluid, side: Side, T_K: number, rho: number, by: By): number {
   const { table } = fluid.boundary
