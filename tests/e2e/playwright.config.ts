@@ -8,8 +8,9 @@ export default defineConfig({
   fullyParallel: false,
   forbidOnly: true,
   retries: 0,
-  timeout: 60_000,
-  expect: { timeout: 10_000 },
+  // Patience for a busy machine: a test that passes takes a fraction of it.
+  timeout: 180_000,
+  expect: { timeout: 30_000 },
   reporter: 'list',
   use: {
     viewport: { width: 1440, height: 900 },
