@@ -9,7 +9,9 @@ test('a number is checked on the fluids page, and a state outside the range is r
   const state = page.getByRole('table', { name: /water, gas/ })
   await expect(state.getByRole('row', { name: /specific enthalpy/ })).toContainText('3051.6 kJ/kg')
   await expect(page.getByText('Wagner')).toBeVisible()
-  await expect(page.getByRole('img', { name: 'Pressure over enthalpy of water, with its two-phase region' })).toBeVisible()
+  await expect(
+    page.getByRole('img', { name: 'Pressure over enthalpy of water, with its two-phase region' }),
+  ).toBeVisible()
   await page.getByLabel('Second value').fill('250 K')
   await expect(page.getByRole('alert').filter({ hasText: 'no water below 273.16 K' })).toBeVisible()
   await page.setViewportSize({ width: 390, height: 844 })

@@ -3,9 +3,9 @@ import { describe, expect, it } from 'vitest'
 import { bind, callAt, compile, complete, parse, show } from '@/lib/formula'
 import type { Fault, Read, Value } from '@/lib/formula'
 import { AROUND, SCOPE, VOCABULARY, tankOf } from './vocabulary'
+import { seed } from '../support/seed'
 
 const RUNS = process.env.SOAK ? 100_000 : 10_000
-const seed = Number(process.env.SEED ?? Date.now() % 1e9)
 const BROKEN: Fault = { fault: 'range', reason: 'out of range' }
 
 /** A value of the kind that a column or thing holds. */

@@ -2,9 +2,9 @@ import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { parse, print } from '@/lib/formula'
 import type { Ast } from '@/lib/formula'
+import { seed } from '../support/seed'
 
 const RUNS = process.env.SOAK ? 50_000 : 2_000
-const seed = Number(process.env.SEED ?? Date.now() % 1e9)
 
 /** Trees of every kind, with the spans left out of account. */
 const name = fc.stringMatching(/^[a-zA-Z_][a-zA-Z0-9_]{0,6}$/)

@@ -3,6 +3,7 @@ import { describe, expect, it } from 'vitest'
 import { compile } from '@/lib/formula'
 import type { Scope } from '@/lib/formula'
 import { AROUND, VOCABULARY, quantityType } from './vocabulary'
+import { seed } from '../support/seed'
 
 const COLUMNS = {
   m: quantityType('mass'),
@@ -12,7 +13,6 @@ const COLUMNS = {
   L: quantityType('length'),
   n: quantityType('dimensionless'),
 }
-const seed = Number(process.env.SEED ?? Date.now() % 1e9)
 const NAMES = Object.keys(COLUMNS) as (keyof typeof COLUMNS)[]
 const SCOPE: Scope = {
   columns: NAMES.map((symbol) => ({ id: symbol, symbol, type: COLUMNS[symbol] })),
