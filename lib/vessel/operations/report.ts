@@ -35,7 +35,7 @@ export function report({ plan, network, index, y, recorder, stoppedBy, outcome, 
     x: gas.x,
     phase: gas.phase,
     shell: shellOf(network, index, from),
-    ...recorder.extremes,
+    ...withEnd(recorder.extremes, gas.p_Pa, gas.T_K),
     moved_kg: volume.m_kg - from.m_kg,
     heat_J: heatOf(network, index, from, y),
     time_s: plan.timeless ? null : outcome.t,
@@ -48,6 +48,17 @@ export function report({ plan, network, index, y, recorder, stoppedBy, outcome, 
       rates: network.calls,
       evaluations: network.evaluations,
     },
+  }
+}
+
+/** The end state is found once more for the report, and may differ from the one recorded in its last digit. */
+function withEnd(extremes: Recorder['extremes'], p_Pa: number, T_K: number): Recorder['extremes'] {
+  return {
+    ...extremes,
+    T_peak_K: Math.max(extremes.T_peak_K, T_K),
+    T_low_K: Math.min(extremes.T_low_K, T_K),
+    p_peak_Pa: Math.max(extremes.p_peak_Pa, p_Pa),
+    p_low_Pa: Math.min(extremes.p_low_Pa, p_Pa),
   }
 }
 
