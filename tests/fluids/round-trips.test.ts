@@ -72,10 +72,12 @@ describe.each(FLUIDS)('$name, one phase', (fluid) => {
 
   it('has heat capacities, a speed of sound and a phase everywhere', () => {
     for (const state of states) {
-      const { phase, evaluations: _, x, ...numbers } = state
-      expect(Object.values(numbers).every(Number.isFinite)).toBe(true)
+      const { T_K, rho_kg_m3, p_Pa, u_J_kg, h_J_kg, s_J_kgK, cv_J_kgK, cp_J_kgK, w_m_s } = state
+      const { x, phase } = state
+      const numbers = [T_K, rho_kg_m3, p_Pa, u_J_kg, h_J_kg, s_J_kgK, cv_J_kgK, cp_J_kgK, w_m_s]
+      expect(numbers.every(Number.isFinite)).toBe(true)
       expect(x).toBeNaN()
-      expect(state.cp_J_kgK).toBeGreaterThan(state.cv_J_kgK)
+      expect(cp_J_kgK).toBeGreaterThan(cv_J_kgK)
       expect(['gas', 'liquid', 'supercritical']).toContain(phase)
     }
   })

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import { findFluid } from '@/lib/fluids'
-import { HelmholtzFluid } from '@/lib/fluids/helmholtz-fluid'
+import type { HelmholtzFluid } from '@/lib/fluids/helmholtz-fluid'
 
 /*
  * IAPWS R6-95(2018), Revised Release on the IAPWS Formulation 1995 for the Thermodynamic Properties of Ordinary Water
