@@ -67,7 +67,7 @@ describe.each(FLUIDS)('$name, one phase', (fluid) => {
   it('in few evaluations of the equation', () => {
     // one in a hundred may take more, where an edge or a minimum is near
     for (const [pair, count] of Object.entries(costly))
-      expect(count, pair).toBeLessThan(Math.max(3, states.length / 100))
+      expect(count, pair).toBeLessThanOrEqual(Math.max(3, states.length / 100))
   })
 
   it('has heat capacities, a speed of sound and a phase everywhere', () => {
