@@ -67,7 +67,7 @@ function plotsOf({ trace, limits }: RunCurves) {
     {
       label: 'mass flow',
       unit: 'g/s',
-      colour: '#6B7A83',
+      colour: '#53646E',
       values: inUnit(trace.flow_kg_s, 'g/s'),
       dashed: true,
       scale: 'right',

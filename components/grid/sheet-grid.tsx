@@ -169,13 +169,21 @@ function settingsFor(
         ),
       )
     },
-    afterSelectionEnd: (row, column) => {
+    afterSelectionEnd: function (this: Handsontable, row, column) {
+      nameForReaders(this.rootElement)
       latest.current.onSelect(view().rows[row]?.id ?? null, column <= LABEL_COLUMN ? null : columns[column - 1].id)
     },
     afterColumnResize: (width, column) => {
       if (column > LABEL_COLUMN) latest.current.onResize(columns[column - 1].id, width)
     },
   }
+}
+
+/** What the component leaves unnamed: its editor, made when it is first needed, and the part that scrolls. */
+function nameForReaders(root: HTMLElement): void {
+  for (const editor of root.ownerDocument.querySelectorAll('textarea.handsontableInput'))
+    editor.setAttribute('aria-label', 'Cell')
+  root.querySelector('.ht_master .wtHolder')?.setAttribute('tabindex', '0')
 }
 
 const range = (from: number, to: number) => Array.from({ length: to - from + 1 }, (_, i) => from + i)

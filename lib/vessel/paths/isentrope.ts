@@ -126,7 +126,6 @@ export class IsentropicFlux {
         lastStep = 0
         continue
       }
-      if ((globalThis as any).DBG) console.log(count, rho, T, ds, dT)
       const h = t.h_J_kg + (t.cv_J_kgK + t.dpdT_rho_Pa_K / rho) * dT
       const speedSquared = 2 * (up.h_J_kg - h)
       // On the isentrope, dT away; as for a perfect gas the square of the speed of sound goes with temperature.
