@@ -90,6 +90,7 @@ export default tseslint.config(
       'next-env.d.ts',
       'db/migrations/**',
       'pictures/**',
+      'test-results/**',
     ],
   },
   ...tseslint.configs.recommended,
