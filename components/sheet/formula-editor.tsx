@@ -1,6 +1,12 @@
 'use client'
 
-import { autocompletion, completionKeymap } from '@codemirror/autocomplete'
+import {
+  acceptCompletion,
+  autocompletion,
+  completionKeymap,
+  completionStatus,
+  moveCompletionSelection,
+} from '@codemirror/autocomplete'
 import type { CompletionContext, CompletionResult } from '@codemirror/autocomplete'
 import { defaultKeymap, history, historyKeymap } from '@codemirror/commands'
 import { HighlightStyle, LRLanguage, LanguageSupport, syntaxHighlighting } from '@codemirror/language'
@@ -100,9 +106,11 @@ function createState(latest: Latest, access: Compartment): EditorState {
       syntaxHighlighting(colours),
       look,
       history(),
-      autocompletion({ override: [(context) => completions(context, latest)], icons: false }),
+      // nothing is chosen by itself: Enter after a whole formula commits it, whether or not the list has come up
+      autocompletion({ override: [(context) => completions(context, latest)], icons: false, selectOnOpen: false }),
       keymap.of([
         ...completionKeymap,
+        { key: 'Tab', run: completeFirst },
         { key: 'Enter', run: commit },
         { key: 'Escape', run: cancel },
         ...historyKeymap,
@@ -121,6 +129,14 @@ function createState(latest: Latest, access: Compartment): EditorState {
       }),
     ],
   })
+}
+
+const takeNext = moveCompletionSelection(true)
+
+/** Tab takes what is chosen in the list, or else its first entry; with no list it moves on, as everywhere. */
+function completeFirst(view: EditorView): boolean {
+  if (completionStatus(view.state) !== 'active') return false
+  return acceptCompletion(view) || (takeNext(view) && acceptCompletion(view))
 }
 
 function completions(context: CompletionContext, { current: { scope, expectation } }: Latest): CompletionResult | null {

@@ -77,8 +77,9 @@ export const test = base.extend<Fixtures, { readonly server: TestServer }>({
 function listenTo(context: BrowserContext, complaints: string[]): void {
   context.on('weberror', (event) => complaints.push(event.error().message))
   context.on('console', (message) => {
-    // A refused request is logged by Chromium itself, with its status; pages that answer 401 or 404 are meant to.
-    const ownWords = !message.text().startsWith('Failed to load resource')
+    // What Chromium itself logs of the network is not ours: pages that answer 401 or 404 are meant to, and so is a line
+    // that cannot be had while the server is down.
+    const ownWords = !/^(Failed to load resource|WebSocket connection to .* failed)/.test(message.text())
     if (message.type() === 'error' && ownWords) complaints.push(message.text())
   })
 }
