@@ -45,9 +45,9 @@ export function flashAtDensity(
     low = T_edge
     const hair = 1e-10 * fluid.scales.R_J_kgK * T_edge * (by === 'p' ? rho : 1)
     // next to the critical point the table is less sharp than the equation
-    const edge = isNearTop(fluid, T_edge)
-      ? valueOf(fluid.singlePhase(T_edge, rho, out), by)
-      : edgeValue(fluid, side, T_edge, rho, by)
+    let edge = edgeValue(fluid, side, T_edge, rho, by)
+    const isClose = Math.abs(value - edge) < 1e8 * hair
+    if (isClose && isNearTop(fluid, T_edge)) edge = valueOf(fluid.singlePhase(T_edge, rho, out), by)
     if (value < edge - hair) return belowEdge(fluid, rho, by, value, T_edge, out)
   }
   const near = guess && guess.phase !== 'two-phase' ? temperatureNear(guess, rho, by, value) : NaN
@@ -60,7 +60,7 @@ export function flashAtDensity(
   const search = new TemperatureAtDensity(fluid, rho, by, value, out)
   if (by === 'p' && side === LIQUID && Number.isNaN(T_edge)) low = warmBranch(search, low, first)
   const slack = isNearTop(fluid, low) ? 1e-5 : 1e-8
-  const T = monotoneRoot(search, 'rising', low * (1 - slack), info.T_max_K * (1 + 1e-8), first, 1e-10)
+  const T = monotoneRoot(search, 'rising', low * (1 - slack), info.T_max_K * (1 + 1e-8), first, 5e-10)
   if (Number.isNaN(T)) throw outside(fluid, rho, by, value, out)
   shift(out, -search.value / search.slope, 0)
   fluid.checkTemperature(out.T_K)
@@ -144,7 +144,7 @@ function belowEdge(fluid: HelmholtzFluid, rho: number, by: By, value: number, T_
     T_low_K * (1 - 1e-9),
     T_edge,
     T_low_K + 0.7 * (T_edge - T_low_K),
-    1e-13,
+    1e-11,
   )
   if (Number.isNaN(T_guess) && lowest > 0) {
     throw new Problem(
@@ -198,9 +198,11 @@ class TableAtDensity implements Objective {
   ) {}
 
   evaluate(T_K: number): void {
-    const h = 1e-5 * T_K
-    this.value = this.at(T_K) - this.wanted
-    this.slope = (this.at(T_K + h) - this.at(T_K - h)) / (2 * h)
+    // backward, since there is no edge above the top
+    const h = 1e-6 * T_K
+    const here = this.at(T_K)
+    this.value = here - this.wanted
+    this.slope = (here - this.at(T_K - h)) / h
   }
 
   private at(T_K: number): number {

@@ -17,6 +17,9 @@ import { bar, kelvin, perCubicMetre } from './words'
 
 /** Liquids at the highest pressures of any fluid here are within this many reducing densities. */
 const DENSEST = 8
+/** Thinner than the space between the planets: there is nothing to work out, and logarithms end. */
+const THINNEST_Pa = 1e-9
+const THINNEST_kg_m3 = 1e-15
 
 /** A fluid by its multi-parameter Helmholtz equation of state. */
 export class HelmholtzFluid implements Fluid {
@@ -142,13 +145,14 @@ export class HelmholtzFluid implements Fluid {
   }
 
   checkPressure(p_Pa: number): void {
-    if (p_Pa > 0 && p_Pa <= this.info.p_max_Pa * (1 + 1e-9)) return
-    if (p_Pa > 0) throw new Problem('range', `no ${this.name} above ${bar(this.info.p_max_Pa)} here: p is ${bar(p_Pa)}`)
+    if (p_Pa >= THINNEST_Pa && p_Pa <= this.info.p_max_Pa * (1 + 1e-9)) return
+    if (p_Pa > THINNEST_Pa)
+      throw new Problem('range', `no ${this.name} above ${bar(this.info.p_max_Pa)} here: p is ${bar(p_Pa)}`)
     throw new Problem('range', `the absolute pressure of ${this.name} has to be above zero: p is ${bar(p_Pa)}`)
   }
 
   checkDensity(rho_kg_m3: number): void {
-    if (!(rho_kg_m3 > 0)) throw new Problem('range', `the density of ${this.name} has to be above zero`)
+    if (!(rho_kg_m3 >= THINNEST_kg_m3)) throw new Problem('range', `the density of ${this.name} has to be above zero`)
     if (rho_kg_m3 > DENSEST * this.scales.rho_reducing_kg_m3)
       throw new Problem('range', `no ${this.name} is as dense as ${perCubicMetre(rho_kg_m3)} here`)
   }

@@ -1,4 +1,5 @@
-import type { FluidData, IdealTerm, ResidualTerm } from './equation-data'
+import type { FluidData, ResidualTerm } from './equation-data'
+import { IdealPart } from './ideal-part'
 import { nonanalyticTerm } from './nonanalytic'
 
 /**
@@ -36,10 +37,10 @@ export class HelmholtzEnergy {
   /** Gaussian terms and those with a reciprocal in τ, nine figures each: n d t eta beta gamma epsilon b kind. */
   private readonly bells: Float64Array
   private readonly nonanalytic: ReturnType<typeof nonanalyticTerm>[]
-  private readonly ideal: readonly IdealTerm[]
+  private readonly ideal: IdealPart
 
   constructor({ ideal, residual }: Pick<FluidData, 'ideal' | 'residual'>) {
-    this.ideal = ideal
+    this.ideal = new IdealPart(ideal)
     const power = residual.filter((term) => term.type === 'power')
     const all = (pick: (term: Extract<ResidualTerm, { type: 'power' }>) => readonly number[]) =>
       power.flatMap((term) => [...pick(term)])
@@ -63,15 +64,16 @@ export class HelmholtzEnergy {
   evaluate(tau: number, delta: number): void {
     this.evaluations++
     this.A00 = this.A10 = this.A01 = this.A20 = this.A11 = this.A02 = 0
-    this.addPowers(tau, delta)
-    if (this.bells.length > 0) this.addBells(tau, delta)
-    for (const term of this.nonanalytic) term(tau, delta, this)
-    this.evaluateIdeal(tau, delta)
+    const lnTau = Math.log(tau)
+    const lnDelta = Math.log(delta)
+    this.addPowers(lnTau, delta)
+    if (this.bells.length > 0) this.addBells(tau, delta, lnTau, lnDelta)
+    for (let i = 0; i < this.nonanalytic.length; i++) this.nonanalytic[i](tau, delta, this)
+    this.ideal.evaluate(tau, lnTau, lnDelta, this)
   }
 
-  private addPowers(tau: number, delta: number): void {
+  private addPowers(lnTau: number, delta: number): void {
     const { n, d, t, l, tAt, tDistinct, tauPowers, deltaPowers, decays, deltaToL } = this
-    const lnTau = Math.log(tau)
     for (let i = 0; i < tDistinct.length; i++) tauPowers[i] = Math.exp(tDistinct[i] * lnTau)
     deltaPowers[0] = 1
     for (let i = 1; i < deltaPowers.length; i++) deltaPowers[i] = deltaPowers[i - 1] * delta
@@ -107,10 +109,14 @@ export class HelmholtzEnergy {
     this.A02 += A02
   }
 
-  private addBells(tau: number, delta: number): void {
+  private addBells(tau: number, delta: number, lnTau: number, lnDelta: number): void {
     const { bells } = this
-    const lnTau = Math.log(tau)
-    const lnDelta = Math.log(delta)
+    let A00 = 0
+    let A10 = 0
+    let A01 = 0
+    let A20 = 0
+    let A11 = 0
+    let A02 = 0
     for (let i = 0; i < bells.length; i += BELL_SIZE) {
       const d = bells[i + 1]
       const t = bells[i + 2]
@@ -135,66 +141,19 @@ export class HelmholtzEnergy {
       const value = bells[i] * Math.exp(exponent + d * lnDelta)
       const slopeTau = t + tau * first
       const slopeDelta = d - 2 * eta * delta * fromEpsilon
-      this.A00 += value
-      this.A10 += slopeTau * value
-      this.A01 += slopeDelta * value
-      this.A20 += (slopeTau * slopeTau - t + tau * tau * second) * value
-      this.A11 += slopeTau * slopeDelta * value
-      this.A02 += (slopeDelta * slopeDelta - d - 2 * eta * delta * delta) * value
+      A00 += value
+      A10 += slopeTau * value
+      A01 += slopeDelta * value
+      A20 += (slopeTau * slopeTau - t + tau * tau * second) * value
+      A11 += slopeTau * slopeDelta * value
+      A02 += (slopeDelta * slopeDelta - d - 2 * eta * delta * delta) * value
     }
-  }
-
-  private evaluateIdeal(tau: number, delta: number): void {
-    let B0 = Math.log(delta)
-    let B1 = 0
-    let B2 = 0
-    for (const term of this.ideal) {
-      switch (term.type) {
-        case 'lead':
-          B0 += term.a1 + term.a2 * tau
-          B1 += term.a2 * tau
-          break
-        case 'log':
-          B0 += term.a * Math.log(tau)
-          B1 += term.a
-          B2 -= term.a
-          break
-        case 'power':
-          for (let i = 0; i < term.n.length; i++) {
-            const t = term.t[i]
-            const value = term.n[i] * tau ** t
-            B0 += value
-            B1 += t * value
-            B2 += t * (t - 1) * value
-          }
-          break
-        case 'planck_einstein':
-          for (let i = 0; i < term.n.length; i++) {
-            const n = term.n[i]
-            const x = term.theta[i] * tau
-            const decay = Math.exp(-x)
-            const rest = -Math.expm1(-x)
-            B0 += n * Math.log(rest)
-            B1 += (n * x * decay) / rest
-            B2 -= (n * x * x * decay) / (rest * rest)
-          }
-          break
-        case 'planck_einstein_general':
-          for (let i = 0; i < term.n.length; i++) {
-            const n = term.n[i]
-            const x = term.theta[i] * tau
-            const grown = term.d[i] * Math.exp(x)
-            const share = grown / (term.c[i] + grown)
-            B0 += n * Math.log(term.c[i] + grown)
-            B1 += n * x * share
-            B2 += n * x * x * share * (1 - share)
-          }
-          break
-      }
-    }
-    this.B0 = B0
-    this.B1 = B1
-    this.B2 = B2
+    this.A00 += A00
+    this.A10 += A10
+    this.A01 += A01
+    this.A20 += A20
+    this.A11 += A11
+    this.A02 += A02
   }
 }
 

@@ -13,6 +13,8 @@ type NonanalyticTerm = Extract<ResidualTerm, { type: 'nonanalytic' }>
 
 /** Nearer to δ = 1 the derivatives are 0/0 in floating point; they are taken this far away instead. */
 const NEAREST = 1e-10
+/** exp(−60) is 1e−26. */
+const FAR = 60
 
 /**
  * The critical-region term n Δ^b δ ψ of the equations for water and carbon dioxide (W. Wagner, A. Pruß, J. Phys. Chem.
@@ -30,6 +32,7 @@ export function nonanalyticTerm(term: NonanalyticTerm, i: number) {
     term.D[i],
   ]
   const k = 1 / (2 * beta)
+  const isSeventhPower = a === 3.5
 
   return (tau: number, deltaGiven: number, sum: Derivatives): void => {
     const off = deltaGiven - 1
@@ -37,16 +40,19 @@ export function nonanalyticTerm(term: NonanalyticTerm, i: number) {
     const delta = 1 + d1
     const t1 = tau - 1
     const q = d1 * d1
-    const qk = q ** k
-    const qa = q ** a
+    const exponent = C * q + D * t1 * t1
+    // away from the critical point the term is less than the last digit of the others, with room for its derivatives
+    if (exponent > FAR) return
+    const qk = Math.exp(k * Math.log(q))
+    const qa = isSeventhPower ? q * q * q * Math.abs(d1) : q ** a
     const theta = -t1 + A * qk
     const Delta = theta * theta + B * qa
-    const psi = Math.exp(-C * q - D * t1 * t1)
+    const psi = Math.exp(-exponent)
 
     const DeltaD = (A * theta * 4 * k * qk + 2 * B * a * qa) / d1
     const DeltaDD =
       DeltaD / d1 + (4 * B * a * (a - 1) * qa + 8 * A * A * k * k * qk * qk + 8 * A * theta * k * (k - 1) * qk) / q
-    const power = Delta ** b
+    const power = Math.exp(b * Math.log(Delta))
     const power1 = Delta === 0 ? 0 : power / Delta
     const power2 = Delta === 0 ? 0 : power1 / Delta
     const pD = b * power1 * DeltaD

@@ -95,7 +95,10 @@ export class SaturationTable {
     const off = (place: number) => (place + 1) * STEP * interpolate(table, place) - lnRho
     const sign = side === VAPOUR ? 1 : -1
     const end = side === VAPOUR ? this.sigma(this.T_low_K) / STEP - 1 : this.densestPlace()
-    if (sign * off(-1) < 0 || sign * off(end) > 0) return NaN
+    const past = sign * off(end)
+    if (sign * off(-1) < 0 || past > 1e-9) return NaN
+    // on the last of the edge itself, as far as the table can tell
+    if (past > -1e-12) return this.T_at(end)
     return this.search(off, sign, end)
   }
 

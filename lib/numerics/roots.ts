@@ -48,10 +48,17 @@ export function monotoneRoot(
     g0 = slope
     let next = x + step
     const wild = !(next > a && next < b) || Math.abs(step) > 0.7 * Math.abs(lastStep)
-    if (wild && !(i < 2 && next > a && next < b)) next = a > 0 && b > 4 * a ? Math.sqrt(a * b) : (a + b) / 2
-    if (next === x || b - a <= 2e-16 * Math.abs(b)) return a === low || b === high ? NaN : x
+    if (wild && !(i < 2 && next > a && next < b)) {
+      // a step that leaves the bounds by little means a zero next to them; else halve
+      if (Number.isFinite(step) && i < 3) next = step > 0 ? b - 0.01 * (b - x) : a + 0.01 * (x - a)
+      else next = a > 0 && b > 4 * a ? Math.sqrt(a * b) : (a + b) / 2
+    }
+    if (next === x || b - a <= 2e-16 * Math.abs(b)) return isEnd(x, low) || isEnd(x, high) ? NaN : x
     lastStep = next - x
     x = next
   }
   return NaN
 }
+
+/** A search that runs up against a bound has found that there is no zero. */
+const isEnd = (x: number, bound: number) => Math.abs(x - bound) <= 1e-15 * Math.abs(bound)

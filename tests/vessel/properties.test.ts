@@ -2,7 +2,7 @@ import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { Problem } from '@/lib/errors'
 import { charge, equalise, hold, vent, type Run } from '@/lib/vessel'
-import { built, cases, gasScene } from './random'
+import { built, cases, gasScene, PATIENCE_ms } from './random'
 
 /** What must hold of any run, however it came about. */
 function expectSound(run: Run) {
@@ -46,7 +46,7 @@ function attempt(operation: () => Run): Run | null {
 }
 
 describe('any charge', () => {
-  it('in time conserves, and stops where it is told', () => {
+  it('in time conserves, and stops where it is told', { timeout: PATIENCE_ms }, () => {
     fc.assert(
       fc.property(gasScene, fc.double({ min: 0.05, max: 1.2, noNaN: true }), (scene, part) => {
         const { low, high, supply } = built(scene)
@@ -63,24 +63,30 @@ describe('any charge', () => {
     )
   })
 
-  it('as a balance comes to the same as the slowest of flows without heat, whatever the path', () => {
-    fc.assert(
-      fc.property(gasScene, (scene) => {
-        const { low, high, supply } = built(scene)
-        const { path } = scene
-        const stops = { until_p_Pa: high.p_Pa }
-        const balance = attempt(() => charge({ from: low, supply, stops }))
-        const timed = attempt(() => charge({ from: low, supply, through: path, stops, heat: 'adiabatic', rtol: 1e-8 }))
-        if (!balance || !timed) return
-        expectSound(balance)
-        expect(Math.abs(timed.T_K / balance.T_K - 1)).toBeLessThan(1e-6)
-        expect(Math.abs(timed.m_kg / balance.m_kg - 1)).toBeLessThan(1e-6)
-      }),
-      { numRuns: cases(30) },
-    )
-  })
+  it(
+    'as a balance comes to the same as the slowest of flows without heat, whatever the path',
+    { timeout: PATIENCE_ms },
+    () => {
+      fc.assert(
+        fc.property(gasScene, (scene) => {
+          const { low, high, supply } = built(scene)
+          const { path } = scene
+          const stops = { until_p_Pa: high.p_Pa }
+          const balance = attempt(() => charge({ from: low, supply, stops }))
+          const timed = attempt(() =>
+            charge({ from: low, supply, through: path, stops, heat: 'adiabatic', rtol: 1e-8 }),
+          )
+          if (!balance || !timed) return
+          expectSound(balance)
+          expect(Math.abs(timed.T_K / balance.T_K - 1)).toBeLessThan(1e-6)
+          expect(Math.abs(timed.m_kg / balance.m_kg - 1)).toBeLessThan(1e-6)
+        }),
+        { numRuns: cases(30) },
+      )
+    },
+  )
 
-  it('without heat ends the same however it is split', () => {
+  it('without heat ends the same however it is split', { timeout: PATIENCE_ms }, () => {
     fc.assert(
       fc.property(gasScene, fc.double({ min: 0.1, max: 0.9, noNaN: true }), (scene, part) => {
         const { low, high, supply } = built(scene)
@@ -99,7 +105,7 @@ describe('any charge', () => {
 })
 
 describe('any vent', () => {
-  it('conserves, and stops where it is told', () => {
+  it('conserves, and stops where it is told', { timeout: PATIENCE_ms }, () => {
     fc.assert(
       fc.property(gasScene, fc.double({ min: 0.05, max: 0.9, noNaN: true }), (scene, part) => {
         const { high } = built(scene)
@@ -116,7 +122,7 @@ describe('any vent', () => {
     )
   })
 
-  it('without heat leaves the entropy of what stays as it was', () => {
+  it('without heat leaves the entropy of what stays as it was', { timeout: PATIENCE_ms }, () => {
     fc.assert(
       fc.property(gasScene, (scene) => {
         const { high } = built(scene)
@@ -132,7 +138,7 @@ describe('any vent', () => {
 })
 
 describe('any two vessels that equalise without heat', () => {
-  it('conserve, come to one pressure, and lose no entropy', () => {
+  it('conserve, come to one pressure, and lose no entropy', { timeout: PATIENCE_ms }, () => {
     fc.assert(
       fc.property(gasScene, fc.boolean(), (scene, swap) => {
         const { low, high } = built(scene)
@@ -160,7 +166,7 @@ describe('any two vessels that equalise without heat', () => {
 })
 
 describe('any hold', () => {
-  it('keeps the mass, and comes to rest with its surroundings where it touches them', () => {
+  it('keeps the mass, and comes to rest with its surroundings where it touches them', { timeout: PATIENCE_ms }, () => {
     fc.assert(
       fc.property(gasScene, (scene) => {
         const { high } = built(scene)

@@ -152,5 +152,8 @@ export function built(scene: typeof gasScene extends fc.Arbitrary<infer Data> ? 
   }
 }
 
+const soak = Number(process.env.SOAK ?? 1)
 /** How many random cases: SOAK multiplies. */
-export const cases = (few: number) => Math.round(few * Number(process.env.SOAK ?? 1))
+export const cases = (few: number) => Math.round(few * soak)
+/** For a test of so many cases. */
+export const PATIENCE_ms = 60_000 * Math.max(1, soak)

@@ -2,7 +2,7 @@ import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { Problem } from '@/lib/errors'
 import { charge, equalise, evacuate, hold, start, vent, type Draw, type Heat, type Run, type Stops } from '@/lib/vessel'
-import { anyVessel, built, cases, gasScene, wetPath } from './random'
+import { anyVessel, built, cases, gasScene, PATIENCE_ms, wetPath } from './random'
 import { fluid } from './vessels'
 
 /*
@@ -38,13 +38,14 @@ function outcome(operation: () => Run): string {
     return run.stoppedBy
   } catch (error) {
     if (!(error instanceof Problem)) throw error
+    expect(error.code, error.reason).not.toBe('unconverged')
     expect(error.reason).not.toMatch(/NaN|undefined|Infinity/)
     return error.code
   }
 }
 
 describe('any operation on a gas', () => {
-  it('ends with a result or a reason', () => {
+  it('ends with a result or a reason', { timeout: PATIENCE_ms }, () => {
     const ends = new Map<string, number>()
     const kind = fc.constantFrom(
       'charge',
@@ -86,13 +87,12 @@ describe('any operation on a gas', () => {
       { numRuns: cases(170) },
     )
     // Most of what is asked here can be done.
-    expect(ends.get('unconverged') ?? 0).toBe(0)
     expect((ends.get('until_p') ?? 0) + (ends.get('settled') ?? 0) + (ends.get('for') ?? 0)).toBeGreaterThan(cases(50))
   })
 })
 
 describe('any vent of a liquefied gas', () => {
-  it('ends with a result or a reason', () => {
+  it('ends with a result or a reason', { timeout: PATIENCE_ms }, () => {
     const ends = new Map<string, number>()
     const wet = fc.constantFrom(
       { name: 'carbon_dioxide', low: 230, high: 300 },
@@ -120,6 +120,6 @@ describe('any vent of a liquefied gas', () => {
       }),
       { numRuns: cases(80) },
     )
-    expect(ends.get('unconverged') ?? 0).toBe(0)
+    expect(ends.size).toBeGreaterThan(2)
   })
 })

@@ -96,14 +96,14 @@ class Integration {
   }
 
   run(y0: Float64Array): Outcome {
-    const { system, options, values } = this
+    const { system, options } = this
     const { until, maxSteps = 5000, maxStep = Infinity } = options
     this.point.set(y0)
     this.begin()
     options.onPoint?.(0, this.stepper.y, this.stepper.f, null)
-    const already = values.findIndex((value, i) => system.events[i].terminal && value <= 0)
-    if (already >= 0) return this.outcome('event', already)
     this.overdue()
+    const already = this.ended()
+    if (already >= 0) return this.outcome('event', already)
     let h = Math.min(this.firstStep(), maxStep)
     let lastError = 1e-4
     let ceiling = GROW
@@ -127,12 +127,14 @@ class Integration {
       const hNext = Math.min(maxStep, h * Math.min(ceiling, Math.max(SHRINK, factor)))
       ceiling = GROW
       const event = this.finish(h, last ? until : this.t + h)
-      if (event >= 0) {
-        if (system.events[event].terminal) return this.outcome('event', event)
-        h = Math.min(this.firstStep(), hNext)
-        continue
+      if (event >= 0 && system.events[event].terminal) return this.outcome('event', event)
+      const interrupted = event >= 0 || this.overdue()
+      if (interrupted) {
+        // What changed the system may have made another event happen at once.
+        const done = this.ended()
+        if (done >= 0) return this.outcome('event', done)
       }
-      h = this.overdue() ? Math.min(this.firstStep(), hNext) : hNext
+      h = interrupted ? Math.min(this.firstStep(), hNext) : hNext
       if (this.stepper.stiff && options.method !== 'explicit') this.goStiff()
     }
     return this.outcome('end')
@@ -213,6 +215,11 @@ class Integration {
     this.point.set(this.stepper.y)
     this.begin()
     return true
+  }
+
+  /** A terminal event that has happened where a step begins, or -1. */
+  private ended(): number {
+    return this.values.findIndex((value, i) => this.system.events[i].terminal && value <= 0)
   }
 
   /** Stands on `point`. */

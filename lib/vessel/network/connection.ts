@@ -171,7 +171,10 @@ export class Connection {
 
   /** Below 1 where a driven flow is nearly what heat asks for: the drop then only follows. */
   private get unslaved() {
-    return this.flow_kg_s === 0 ? Infinity : (2 * Math.abs(this.flow_kg_s - this.asked_kg_s)) / Math.abs(this.flow_kg_s)
+    // the flow of a ramp is by its nature what is asked for: that says nothing of how near to equal the pressures are
+    return this.ramping || this.flow_kg_s === 0
+      ? Infinity
+      : (2 * Math.abs(this.flow_kg_s - this.asked_kg_s)) / Math.abs(this.flow_kg_s)
   }
 
   /** Falls to zero where the mode is to change. */

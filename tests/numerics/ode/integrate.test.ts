@@ -163,6 +163,21 @@ describe('events', () => {
     expect(y[0]).toBeCloseTo(0.25, 9)
   })
 
+  it('that an interruption makes happen end it there', () => {
+    let shut = false
+    const equations = system({
+      size: 1,
+      rates: (_, out) => (out[0] = shut ? 0 : -1),
+      events: [
+        { terminal: true, value: () => (shut ? -1 : 1) },
+        { terminal: false, value: (y) => (shut ? 1 : y[0]), passed: () => (shut = true) },
+      ],
+    })
+    const { status, event, t } = integrate(equations, Float64Array.of(2), { until: 10, rtol: 1e-6 })
+    expect({ status, event }).toEqual({ status: 'event', event: 0 })
+    expect(t).toBeCloseTo(2, 9)
+  })
+
   it('that interrupt and are overdue happen at the next point', () => {
     let shut = false
     const equations = system({
