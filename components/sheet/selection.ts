@@ -7,6 +7,11 @@ export interface Selection {
   readonly column: string
 }
 
+/** The selection as it was, where the next one is the same place. */
+export function sameSelection(before: Selection | null, next: Selection | null): Selection | null {
+  return before && next && before.row === next.row && before.column === next.column ? before : next
+}
+
 export interface SelectedCell {
   readonly row: RowView
   /** Counted from 1, as people see it. */

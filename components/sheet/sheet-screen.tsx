@@ -21,7 +21,7 @@ import { LiveBanner, LivePill } from './live-pill'
 import { PhoneSheet } from './phone-sheet'
 import { ReadingPanel } from './reading-panel'
 import { RowTools } from './row-tools'
-import { selectedCell } from './selection'
+import { sameSelection, selectedCell } from './selection'
 import type { Selection } from './selection'
 import { useLive, useOpenSheet, useView } from './use-open-sheet'
 import type { OpenSheet } from './use-open-sheet'
@@ -179,7 +179,8 @@ function OpenedSheet({
                 onEdit={edit}
                 onSelect={(row, column) => {
                   setRowId(row)
-                  setSelection(row && column ? { row, column } : null)
+                  // the grid says again where it stands whenever it is drawn: only another place is news
+                  setSelection((before) => sameSelection(before, row && column ? { row, column } : null))
                 }}
                 onResize={(column, width) => session.edits.updateColumn(column, { width })}
                 onUndo={() => session.undo()}
