@@ -31,6 +31,8 @@ export const labelled = (page: Page, label: string) => page.locator('.ht_clone_i
 /** Types into a cell as a person does: over what stands there, then Enter. */
 export async function typeInto(page: Page, state: number, column: Column, text: string): Promise<void> {
   await cell(page, state, column).click()
+  // a second click soon after a first one opens the editor: close it, to type over and not behind what stands there
+  await page.keyboard.press('Escape')
   await page.keyboard.type(text)
   await page.keyboard.press('Enter')
 }
