@@ -57,8 +57,8 @@ function drawContent(td: HTMLTableCellElement, cell: CellView, column: ColumnVie
     td.append(span('cell-error-sign', '!'), span('cell-error-words', value.reason))
     return
   }
-  if (value.kind === 'number') classes.push('cell-number')
   if (column.display === 'margin' && value.kind === 'number') return drawMargin(td, cell, column)
+  if (value.kind === 'number') classes.push('cell-number')
   if (cell.mark) {
     classes.push(cell.mark === 'over' ? 'cell-over' : 'cell-under')
     const sign = span('cell-sign', cell.mark === 'over' ? '▲' : '▼')

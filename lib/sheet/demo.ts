@@ -61,7 +61,7 @@ const ACCUMULATOR_FILL: SheetFile = {
       label: 'Margin to the liner’s limit',
       quantity: 'temperature_difference',
       unit: 'K',
-      width: 164,
+      width: 138,
       display: 'margin',
       formula: 'A1.shell_high - run.T_peak',
       high: 'A1.shell_high - A1.ambient',
